@@ -1,0 +1,2 @@
+//! The data file.
+#![no_std]

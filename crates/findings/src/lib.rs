@@ -1,0 +1,2 @@
+//! Placeholder head.
+#![no_std]

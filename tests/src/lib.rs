@@ -1,0 +1,1 @@
+//! Loaders and tolerances shared by the tests.
