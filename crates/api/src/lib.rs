@@ -1,2 +1,5 @@
-//! Placeholder head.
+//! The one door for both bindings: requests in, answers out.
 #![no_std]
+extern crate alloc;
+
+pub mod response;
