@@ -2,4 +2,8 @@
 #![no_std]
 extern crate alloc;
 
+pub mod request;
 pub mod response;
+mod session;
+
+pub use session::Opened;
