@@ -3,8 +3,7 @@
 //! A page or a shell makes one session and asks it. It keeps no work of the user's: the text of the line
 //! comes with every request, so a session that fell over is made again without loss.
 
-
-
+use crate::response::Note;
 use alloc::string::String;
 use alloc::vec::Vec;
 use serde::Serialize;
