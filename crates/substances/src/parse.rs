@@ -30,7 +30,7 @@ const S298_J_PER_K: f64 = 0.05;
 /// Largest step of G, or of H inside a phase, at a join, J/mol.
 const JOIN_J: f64 = 100.0;
 /// Largest heat capacity per mole of atoms that is believed, J/(mol K): above it a lambda peak or a slip.
-const CP_PER_ATOM: f64 = 60.0;
+const CP_PER_ATOM: f64 = 100.0;
 
 impl Book {
     /// Reads and checks the text of a data file.
