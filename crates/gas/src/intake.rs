@@ -242,7 +242,7 @@ impl Intake {
         if let Some(cell) = &reading.cell {
             it.inputs.push(Input {
                 label: "cell voltage".to_string(),
-                lever: Some("oxygen_cell".to_string()),
+                lever: None,
                 quantity: cell.voltage,
                 role: Role::CellVoltage,
             });
@@ -446,14 +446,15 @@ impl Intake {
         let Role::Channel { pressure, basis, .. } = self.inputs[input].role else { return None };
         let mut room = 1.0 - water_share;
         for (i, (other, &v)) in self.inputs.iter().zip(values).enumerate() {
-            if let Role::Channel { species, pressure, basis } = other.role {
-                if i != input && Some(species) != self.water {
-                    room -= match (pressure, basis) {
-                        (true, _) => v / p_bar,
-                        (false, Basis::Wet) => v,
-                        (false, Basis::Dry) => v * (1.0 - water_share),
-                    };
-                }
+            if let Role::Channel { species, pressure, basis } = other.role
+                && i != input
+                && Some(species) != self.water
+            {
+                room -= match (pressure, basis) {
+                    (true, _) => v / p_bar,
+                    (false, Basis::Wet) => v,
+                    (false, Basis::Dry) => v * (1.0 - water_share),
+                };
             }
         }
         let room = room.max(0.0);
