@@ -94,6 +94,19 @@ impl What {
         }
     }
 
+    /// Name in the machine's answers.
+    #[must_use]
+    pub fn name(&self) -> String {
+        match self {
+            What::Temperature => "temperature".to_string(),
+            What::Pressure => "pressure".to_string(),
+            What::DewPoint(_) => "dew_point".to_string(),
+            What::Gas(_, f) => f.clone(),
+            What::Activity(_, f) => alloc::format!("activity {f}"),
+            What::Rate => "rate".to_string(),
+        }
+    }
+
     /// The situation with this lever at a value, internal unit.
     #[must_use]
     pub fn apply(&self, at: &Situation, value: f64) -> Situation {
@@ -264,18 +277,5 @@ impl Lever {
     #[must_use]
     pub fn fails_above(&self, on_side: bool) -> Option<bool> {
         self.nearest().map(|t| (self.reading > t) != on_side)
-    }
-
-    /// Name in the machine's answers.
-    #[must_use]
-    pub fn name(&self) -> String {
-        match &self.what {
-            What::Temperature => "temperature".to_string(),
-            What::Pressure => "pressure".to_string(),
-            What::DewPoint(_) => "dew_point".to_string(),
-            What::Gas(_, f) => f.clone(),
-            What::Activity(_, f) => alloc::format!("activity {f}"),
-            What::Rate => "rate".to_string(),
-        }
     }
 }

@@ -108,6 +108,7 @@ pub fn propose(book: &Book, shift: &Shift, line: &Line) -> Vec<Proposal> {
         .filter(|(i, s)| s.records.iter().any(|r| r.class == Class::Condensed) && book.default_class(*i) == Class::Condensed)
         .map(|(_, s)| s.formula.text())
         .collect();
+    let carbon = Element::from_symbol("C");
     let mut list: Vec<Proposal> = Vec::new();
     for start in &starts {
         let own: BTreeSet<Element> = start.iter().filter_map(|f| book.find(f)).flat_map(|i| book.substances[i].formula.counts().keys().copied()).collect();
@@ -136,10 +137,10 @@ pub fn propose(book: &Book, shift: &Shift, line: &Line) -> Vec<Proposal> {
                 let right = core::iter::once(*product).chain(given.iter().copied());
                 let text = left.collect::<Vec<_>>().join(" + ") + " = " + &right.collect::<Vec<_>>().join(" + ");
                 let Ok(equation) = Equation::parse(&text) else { continue };
-                let kind = match (*taken, *given) {
+                let kind = match (taken, given) {
                     ([], [g, ..]) => Kind::GivesOff((*g).to_string()),
                     (["H2"], ["H2O"]) => Kind::Reduces,
-                    (["CO"], ["CO2"]) if !elements.contains(&carbon()) => Kind::Reduces,
+                    (["CO"], ["CO2"]) if !carbon.is_some_and(|c| elements.contains(&c)) => Kind::Reduces,
                     (["H2O"], ["H2"]) | (["CO2"], ["CO"]) | (["O2"], []) => Kind::Oxidises,
                     _ => Kind::Forms,
                 };
@@ -166,10 +167,6 @@ pub fn propose(book: &Book, shift: &Shift, line: &Line) -> Vec<Proposal> {
     list.sort_by(|a, b| a.z.abs().total_cmp(&b.z.abs()));
     list.truncate(MOST);
     list
-}
-
-fn carbon() -> Element {
-    Element::from_symbol("C").unwrap_or_else(|| unreachable!("carbon is in the table"))
 }
 
 /// Whether a member's own elements, those the gas does not bring, all go into the product.
