@@ -220,7 +220,7 @@ def write(version, sources, substances):
 
 # Heat capacity per mole of atoms above which a record is not believed; the records with a measured peak may go higher.
 CP_PER_ATOM, CP_AT_PEAK = 60, 100
-PEAKS = {"Fe": "Curie point, 1042 K", "K2S": "1050 K", "Na2S": "1276 K", "SrCl2": "990 K"}
+PEAKS = {"Fe": "Curie point, 1042 K", "K2S": "1050 K", "Na2S": "1276 K", "SrCl2": "990 K", "Fe3O4": "848 K", "Fe2O3": "955 K", "MgFe2O4": "665 K"}
 
 
 def check(sources, substances):

@@ -11,7 +11,7 @@ import re
 from functools import cache
 from importlib import resources
 
-from mpmath import lu_solve, matrix, mpf
+from mpmath import log, lu_solve, matrix, mpf
 
 from form import T0, Phase, Span, counts, rounded, span
 
@@ -124,9 +124,8 @@ def solve(points, exponents, t_ref, h_ref, s_ref):
     # temperatures in kilokelvin, so that the normal equations are well scaled
     for t, cp, s, h, _ in points:
         x, x0 = mpf(t) / 1000, mpf(t_ref) / 1000
-        from mpmath import log
-
-        add([x**e for e in map(mpf, exponents)], mpf(cp), mpf(1) / 9)
+        if cp is not None:
+            add([x**e for e in map(mpf, exponents)], mpf(cp), mpf(1) / 9)
         if abs(t - t_ref) < 1e-6:
             continue
         add(
@@ -162,7 +161,7 @@ def fit(number, low, high, h298=None, s298=None, cuts=()):
     h298 = h0 if h298 is None else h298
     s298 = s0 if s298 is None else s298
     spans, worst = [], mpf(0)
-    parts = []
+    parts, before = [], None
     for points in pieces(number, low, high):
         edges = [c for c in cuts if points[0][0] < c < points[-1][0]]
         for a, b in zip([points[0][0], *edges], [*edges, points[-1][0]]):
@@ -172,9 +171,11 @@ def fit(number, low, high, h298=None, s298=None, cuts=()):
         inside = next((p for p in points if abs(p[0] - T0) < 1e-6), points[0])
         t_ref, _, s_ref, h_ref, _ = inside
         terms = solve(points, exponents_for(points), t_ref, h_ref, s_ref)
-        if spans and abs(spans[-1].high - lo) < 1e-6 and not _jump(number, lo):
-            # join on to the span before, so that G and H are continuous
-            H, S = spans[-1].H(lo), spans[-1].S(lo)
+        if spans and abs(spans[-1].high - lo) < 1e-6:
+            # start where the span before ends, plus the step that the table shows there
+            t_ref, last = lo, spans[-1]
+            H = last.H(lo) + (mpf(points[0][3]) - mpf(before[3])) * 1000
+            S = last.S(lo) + (mpf(points[0][2]) - mpf(before[2]))
         else:
             H, S = mpf(h298) * 1000 + mpf(h_ref) * 1000, mpf(s298) + mpf(s_ref) - mpf(s0)
         made = span(lo, hi, terms, t_ref, H, S)
@@ -182,6 +183,7 @@ def fit(number, low, high, h298=None, s298=None, cuts=()):
             stated = mpf(h298) * 1000 + mpf(h) * 1000 - mpf(t) * (mpf(s) + mpf(s298) - mpf(s0))
             worst = max(worst, abs(made.G(t) - stated) / 1000)
         spans.append(made)
+        before = points[-1]
     return spans, worst
 
 
