@@ -1,1 +1,395 @@
 //! Numbers and units as people type them, in the habit of their site.
+//!
+//! Decimal comma or point; thousands apart by a thin or plain space or an apostrophe; a minus of any kind;
+//! exponents; a tolerance after ±; `<` for a reading at its detection limit; units in many spellings. What
+//! can mean two things is refused with both as ready answers; nothing is guessed.
+
+use crate::constants::BAR_PER_ATM;
+use crate::reading::{Quantity, QuantityError, Spread};
+use crate::unit::{Kind, Unit};
+use alloc::format;
+use alloc::string::{String, ToString};
+use alloc::vec::Vec;
+
+/// What was typed, understood.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Typed {
+    /// The quantity, with its tolerance where one was typed.
+    pub quantity: Quantity,
+    /// Typed with `<`: at the detection limit.
+    pub bound: bool,
+    /// `ice` or `water`, where a dew or frost point was typed so.
+    pub over: Option<&'static str>,
+    /// A unit was typed.
+    pub unit_typed: bool,
+}
+
+/// Why something typed is not understood.
+#[derive(Debug, Clone, PartialEq, thiserror::Error)]
+#[error("found {found}, expected {expected}")]
+pub struct EntryError {
+    /// What was found.
+    pub found: String,
+    /// What was expected.
+    pub expected: String,
+    /// Place in the text, in characters from 1.
+    pub column: usize,
+    hints: Vec<String>,
+}
+
+impl EntryError {
+    fn new(found: impl Into<String>, expected: impl Into<String>, column: usize) -> Self {
+        Self { found: found.into(), expected: expected.into(), column, hints: Vec::new() }
+    }
+
+    /// Ready answers, as they would be typed.
+    #[must_use]
+    pub fn hints(&self) -> Vec<String> {
+        self.hints.clone()
+    }
+}
+
+/// Longest entry that is read, characters.
+const LONGEST: usize = 80;
+
+/// Spellings of units beside their symbols; compared without case, spaces, dots and brackets.
+const SPELLINGS: [(&str, Unit); 76] = [
+    ("°c", Unit::Celsius), ("ºc", Unit::Celsius), ("degc", Unit::Celsius), ("deg c", Unit::Celsius), ("celsius", Unit::Celsius), ("℃", Unit::Celsius), ("grad", Unit::Celsius),
+    ("°f", Unit::Fahrenheit), ("ºf", Unit::Fahrenheit), ("degf", Unit::Fahrenheit), ("fahrenheit", Unit::Fahrenheit), ("℉", Unit::Fahrenheit),
+    ("kelvin", Unit::Kelvin), ("°k", Unit::Kelvin),
+    ("bara", Unit::Bar), ("barabs", Unit::Bar), ("mbara", Unit::Millibar), ("mbarabs", Unit::Millibar), ("hpa", Unit::Millibar), ("kpaa", Unit::Kilopascal),
+    ("mmhg", Unit::Torr), ("psia", Unit::Psi), ("atma", Unit::Atmosphere),
+    ("vol%", Unit::Percent), ("vol-%", Unit::Percent), ("%vol", Unit::Percent), ("v%", Unit::Percent), ("wt%", Unit::Percent), ("wt-%", Unit::Percent), ("%wt", Unit::Percent), ("mass%", Unit::Percent), ("mol%", Unit::Percent), ("percent", Unit::Percent), ("pct", Unit::Percent),
+    ("ppmv", Unit::Ppm), ("volppm", Unit::Ppm), ("vpm", Unit::Ppm), ("ppbv", Unit::Ppb), ("volppb", Unit::Ppb), ("1", Unit::Fraction), ("mol/mol", Unit::Fraction),
+    ("volt", Unit::Volt), ("millivolt", Unit::Millivolt),
+    ("k/s", Unit::KelvinPerSecond), ("c/s", Unit::KelvinPerSecond), ("°c/s", Unit::KelvinPerSecond), ("degc/s", Unit::KelvinPerSecond), ("k/sec", Unit::KelvinPerSecond),
+    ("k/min", Unit::KelvinPerMinute), ("c/min", Unit::KelvinPerMinute), ("°c/min", Unit::KelvinPerMinute), ("degc/min", Unit::KelvinPerMinute), ("k/m", Unit::KelvinPerMinute),
+    ("k/h", Unit::KelvinPerHour), ("c/h", Unit::KelvinPerHour), ("°c/h", Unit::KelvinPerHour), ("degc/h", Unit::KelvinPerHour), ("k/hr", Unit::KelvinPerHour), ("k/hour", Unit::KelvinPerHour),
+    ("sec", Unit::Second), ("secs", Unit::Second), ("second", Unit::Second), ("seconds", Unit::Second),
+    ("mins", Unit::Minute), ("minute", Unit::Minute), ("minutes", Unit::Minute), ("hr", Unit::Hour), ("hrs", Unit::Hour), ("hour", Unit::Hour), ("hours", Unit::Hour), ("stunden", Unit::Hour),
+    ("frac", Unit::Fraction), ("torr", Unit::Torr), ("mm hg", Unit::Torr), ("pascal", Unit::Pascal), ("atm", Unit::Atmosphere),
+];
+
+/// Gauge units: size of their step in bar.
+const GAUGE: [(&str, f64); 9] = [
+    ("barg", 1.0), ("mbarg", 1e-3), ("kpag", 1e-2), ("psig", 0.068_947_572_931_683_6), ("baro", 1.0), ("barü", 1.0), ("mbarü", 1e-3), ("mmh2o", 9.806_65e-5), ("mbarover", 1e-3),
+];
+
+fn folded(text: &str) -> String {
+    text.chars().filter(|c| !c.is_whitespace() && !matches!(c, '(' | ')' | '.')).flat_map(char::to_lowercase).collect()
+}
+
+/// The unit a text names, in any spelling; `None` where it names none.
+#[must_use]
+pub fn unit(text: &str) -> Option<Unit> {
+    let bare = text.trim();
+    if let Some(unit) = Unit::ALL.iter().find(|u| u.symbol() == bare) {
+        return Some(*unit);
+    }
+    let key = folded(bare);
+    // Case tells millibar from megabar and millivolt from megavolt; nobody measures either mega here.
+    SPELLINGS
+        .iter()
+        .find(|(s, _)| folded(s) == key)
+        .map(|(_, u)| *u)
+        .or_else(|| Unit::ALL.iter().find(|u| folded(u.symbol()) == key).copied())
+}
+
+/// A plain number in the habit of the site, without unit.
+///
+/// # Errors
+/// [`EntryError`] where it is no number, or could be two.
+pub fn number(text: &str) -> Result<f64, EntryError> {
+    let text = text.trim();
+    let (value, used) = take_number(text, 1)?;
+    if used < text.len() {
+        return Err(EntryError::new(format!("\u{201c}{}\u{201d} after the number", clip(&text[used..])), "nothing after it", text[..used].chars().count() + 1));
+    }
+    Ok(value)
+}
+
+/// Reads a quantity of one kind.
+///
+/// # Errors
+/// [`EntryError`] where it does not read, has a unit of another kind, or cannot be (below 0 K, for example).
+pub fn parse(text: &str, kind: Kind, default_unit: Unit) -> Result<Typed, EntryError> {
+    let typed = parse_any(text, default_unit)?;
+    if typed.quantity.unit.kind() == kind {
+        return Ok(typed);
+    }
+    let units: Vec<&str> = Unit::ALL.iter().filter(|u| u.kind() == kind).map(|u| u.symbol()).collect();
+    Err(EntryError::new(format!("the unit {}", typed.quantity.unit.symbol()), format!("one of {}", units.join(", ")), 1))
+}
+
+/// Reads a quantity of any kind; a number without a unit is in `default_unit`.
+///
+/// # Errors
+/// [`EntryError`] as for [`parse`].
+pub fn parse_any(text: &str, default_unit: Unit) -> Result<Typed, EntryError> {
+    let whole = text;
+    let length = whole.chars().count();
+    if length > LONGEST {
+        return Err(EntryError::new(format!("{length} characters"), format!("a reading of at most {LONGEST}"), LONGEST));
+    }
+    let mut rest = whole.trim();
+    let column = |rest: &str| whole.trim_end().chars().count().saturating_sub(rest.chars().count()) + 1;
+    if rest.is_empty() {
+        return Err(EntryError::new("nothing", "a number with its unit", 1));
+    }
+    let mut bound = false;
+    if let Some(after) = rest.strip_prefix(['<', '\u{2264}']) {
+        bound = true;
+        rest = after.trim_start();
+    }
+    let (value, used) = take_number(rest, column(rest))?;
+    rest = rest[used..].trim_start();
+    // The tolerance may stand before or after the unit.
+    let (before, mut tolerance) = split_tolerance(rest);
+    let mut unit_text = before.trim();
+    let mut tolerance_unit = "";
+    let tolerance_value;
+    if let Some(t) = tolerance {
+        let t = t.trim_start();
+        let (number, used) = take_number(t, column(t))?;
+        tolerance_unit = t[used..].trim();
+        if unit_text.is_empty() {
+            unit_text = tolerance_unit;
+        }
+        tolerance_value = Some(number);
+    } else {
+        tolerance_value = None;
+        tolerance = None;
+    }
+    let _ = tolerance;
+    let (unit_text, over) = take_over(unit_text);
+    let unit_text = unit_text.trim();
+    let key = folded(unit_text);
+    if let Some((_, step)) = GAUGE.iter().find(|(g, _)| *g == key) {
+        let absolute = BAR_PER_ATM + value * step;
+        let mut e = EntryError::new(format!("a pressure over the hall, {unit_text}"), "an absolute pressure", column(unit_text));
+        if absolute > 0.0 {
+            e.hints.push(format!("{} bar", shortest(round_to(absolute, 1e-5))));
+        }
+        return Err(e);
+    }
+    let (unit_found, unit_typed) = if unit_text.is_empty() {
+        (default_unit, false)
+    } else {
+        let found = unit(unit_text).ok_or_else(|| {
+            let all: Vec<&str> = Unit::ALL.iter().map(|u| u.symbol()).collect();
+            EntryError::new(format!("the unit \u{201c}{}\u{201d}", clip(unit_text)), format!("one of {}", all.join(", ")), column(unit_text))
+        })?;
+        (found, true)
+    };
+    let fail = |e: QuantityError| {
+        let text = e.to_string();
+        let (found, expected) = text.split_once(", expected ").unwrap_or((&text, "a value that can be"));
+        EntryError::new(found.trim_start_matches("found "), expected, 1)
+    };
+    let mut quantity = Quantity::new(value, unit_found).map_err(fail)?;
+    if let Some(t) = tolerance_value {
+        // A tolerance in a unit of its own is turned into steps of the value's unit.
+        let own = take_over(tolerance_unit).0;
+        let own = own.trim();
+        let steps = match unit(own).filter(|_| !own.is_empty()) {
+            Some(u) if u.kind() == unit_found.kind() => t * u.step() / unit_found.step(),
+            _ if own.is_empty() => t,
+            _ => return Err(EntryError::new(format!("a tolerance in \u{201c}{}\u{201d}", clip(own)), format!("a tolerance in {}", unit_found.symbol()), 1)),
+        };
+        quantity = quantity.with_tolerance(steps, Spread::Limits).map_err(fail)?;
+    }
+    Ok(Typed { quantity, bound, over, unit_typed })
+}
+
+fn clip(text: &str) -> String {
+    let mut piece: String = text.chars().take(24).collect();
+    if text.chars().count() > 24 {
+        piece.push('\u{2026}');
+    }
+    piece
+}
+
+fn round_to(x: f64, step: f64) -> f64 {
+    crate::math::round(x / step) * step
+}
+
+fn shortest(x: f64) -> String {
+    let text = format!("{x:.5}");
+    text.trim_end_matches('0').trim_end_matches('.').to_string()
+}
+
+fn split_tolerance(text: &str) -> (&str, Option<&str>) {
+    for mark in ["±", "+/-", "+-", "\u{2213}"] {
+        if let Some(at) = text.find(mark) {
+            return (&text[..at], Some(&text[at + mark.len()..]));
+        }
+    }
+    (text, None)
+}
+
+/// Takes the words for a dew or frost point off a unit: `C dp`, `°C frost`, `C over ice`.
+fn take_over(text: &str) -> (String, Option<&'static str>) {
+    let mut over = None;
+    let mut kept: Vec<&str> = Vec::new();
+    let mut words = text.split_whitespace().peekable();
+    while let Some(word) = words.next() {
+        match word.to_lowercase().trim_end_matches(',') {
+            "fp" | "frost" | "frostpoint" | "ice" => over = Some("ice"),
+            "water" => over = Some("water"),
+            "dp" | "dew" | "dewpoint" | "td" | "point" | "over" => {}
+            _ => kept.push(word),
+        }
+    }
+    (kept.join(" "), over)
+}
+
+/// A number at the head of a text, and how many bytes it takes.
+fn take_number(text: &str, column: usize) -> Result<(f64, usize), EntryError> {
+    let wanted = "a number";
+    let mut chars = text.char_indices().peekable();
+    let mut sign = "";
+    if let Some(&(_, c)) = chars.peek() {
+        if matches!(c, '-' | '\u{2212}' | '\u{2013}' | '\u{2010}' | '\u{2011}') {
+            sign = "-";
+            chars.next();
+        } else if c == '+' && !text.starts_with("+-") && !text.starts_with("+/") {
+            chars.next();
+        }
+        while chars.peek().is_some_and(|(_, c)| c.is_whitespace()) {
+            chars.next();
+        }
+    }
+    // The body: digits with their separators, as typed.
+    let mut body = String::new();
+    let mut end = chars.peek().map_or(text.len(), |(i, _)| *i);
+    while let Some(&(i, c)) = chars.peek() {
+        let next_digit = text[i + c.len_utf8()..].chars().next().is_some_and(|d| d.is_ascii_digit());
+        let after_digit = body.ends_with(|d: char| d.is_ascii_digit());
+        let space = matches!(c, ' ' | '\u{a0}' | '\u{2009}' | '\u{202f}' | '\'' | '\u{2019}');
+        if c.is_ascii_digit() || (matches!(c, '.' | ',') && (next_digit || after_digit)) {
+            body.push(c);
+        } else if space && after_digit && three_digits(&text[i + c.len_utf8()..]) {
+            body.push('\'');
+        } else {
+            break;
+        }
+        chars.next();
+        end = i + c.len_utf8();
+    }
+    if body.is_empty() {
+        let found = if text.is_empty() { "nothing".to_string() } else { format!("\u{201c}{}\u{201d}", clip(text)) };
+        return Err(EntryError::new(found, wanted, column));
+    }
+    let plain = settle(&body, sign, column)?;
+    let (exponent, used) = take_exponent(&text[end..]);
+    end += used;
+    let value: f64 = format!("{sign}{plain}e{exponent}").parse().map_err(|_| EntryError::new(format!("\u{201c}{}\u{201d}", clip(&text[..end])), wanted, column))?;
+    if !value.is_finite() {
+        return Err(EntryError::new(format!("\u{201c}{}\u{201d}", clip(&text[..end])), "a number below 10^308", column));
+    }
+    Ok((value, end))
+}
+
+fn three_digits(text: &str) -> bool {
+    let digits = text.chars().take_while(char::is_ascii_digit).count();
+    digits == 3
+}
+
+/// Digits with separators to digits with a point.
+fn settle(body: &str, sign: &str, column: usize) -> Result<String, EntryError> {
+    let has = |c: char| body.contains(c);
+    let count = |c: char| body.matches(c).count();
+    let bad = || EntryError::new(format!("\u{201c}{}\u{201d}", clip(body)), "one decimal point or comma", column);
+    let spaced = has('\'');
+    let without = |c: char| body.chars().filter(|x| *x != c && *x != '\'').collect::<String>();
+    if has('.') && has(',') {
+        // The one that stands last is the decimal sign; the other parts thousands.
+        let decimal = if body.rfind('.') > body.rfind(',') { '.' } else { ',' };
+        let thousands = if decimal == '.' { ',' } else { '.' };
+        if count(decimal) != 1 || !groups_of_three(body, thousands, decimal) {
+            return Err(bad());
+        }
+        return Ok(without(thousands).replace(decimal, "."));
+    }
+    for c in [',', '.'] {
+        match count(c) {
+            0 => {}
+            1 => {
+                let (before, after) = body.split_once(c).unwrap_or((body, ""));
+                let ambiguous = !spaced && after.len() == 3 && (1..=3).contains(&before.len()) && !before.starts_with('0');
+                if ambiguous {
+                    let mut e = EntryError::new(
+                        format!("\u{201c}{sign}{body}\u{201d}, which may be {sign}{before}{after} or {sign}{before}.{after}"),
+                        "one that can be read one way only",
+                        column,
+                    );
+                    e.hints = alloc::vec![format!("{sign}{before}{after}"), format!("{sign}{before}.{after}0")];
+                    return Err(e);
+                }
+                let plain = without('\'').replace(c, ".");
+                return Ok(if after.is_empty() { plain + "0" } else { plain });
+            }
+            _ => {
+                if spaced || !groups_of_three(body, c, '\0') {
+                    return Err(bad());
+                }
+                return Ok(without(c));
+            }
+        }
+    }
+    Ok(without('\''))
+}
+
+fn groups_of_three(body: &str, separator: char, decimal: char) -> bool {
+    let whole = body.split(decimal).next().unwrap_or(body);
+    let mut parts = whole.split(separator);
+    parts.next().is_some_and(|p| (1..=3).contains(&p.len())) && parts.all(|p| p.len() == 3)
+}
+
+/// An exponent at the head of a text: `e-3`, `×10^-3`, `·10⁻³`; and how many bytes it takes.
+fn take_exponent(text: &str) -> (i32, usize) {
+    let digits = |t: &str| -> Option<(i32, usize)> {
+        let mut value = String::new();
+        let mut used = 0;
+        for c in t.chars() {
+            let plain = match c {
+                '-' | '\u{2212}' | '\u{207b}' if value.is_empty() => '-',
+                '+' if value.is_empty() => '+',
+                '0'..='9' => c,
+                '\u{2070}' => '0',
+                '\u{b9}' => '1',
+                '\u{b2}' => '2',
+                '\u{b3}' => '3',
+                '\u{2074}'..='\u{2079}' => char::from_digit(c as u32 - 0x2070, 10)?,
+                _ => break,
+            };
+            value.push(plain);
+            used += c.len_utf8();
+        }
+        if value.len() > 4 {
+            return None;
+        }
+        value.parse().ok().map(|v| (v, used))
+    };
+    if let Some(rest) = text.strip_prefix(['e', 'E'])
+        && let Some((value, used)) = digits(rest)
+    {
+        return (value, used + 1);
+    }
+    let trimmed = text.trim_start();
+    let lead = text.len() - trimmed.len();
+    for mark in ["×", "·", "*", "x", "⋅"] {
+        if let Some(rest) = trimmed.strip_prefix(mark) {
+            let inner = rest.trim_start();
+            let gap = rest.len() - inner.len();
+            if let Some(rest) = inner.strip_prefix("10") {
+                let caret = rest.strip_prefix('^');
+                let body = caret.unwrap_or(rest);
+                if let Some((value, used)) = digits(body) {
+                    return (value, lead + mark.len() + gap + 2 + usize::from(caret.is_some()) + used);
+                }
+            }
+        }
+    }
+    (0, 0)
+}

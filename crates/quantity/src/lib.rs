@@ -10,6 +10,7 @@ extern crate alloc;
 
 pub mod constants;
 pub mod entry;
+pub mod instrument;
 pub mod math;
 mod reading;
 mod unit;
