@@ -159,9 +159,6 @@ impl ZoneGas {
                         Moved::Temperature => place.t_k += step * u,
                     }
                     let Ok((state, _)) = self.read(book, shift, &place) else { continue };
-                    if state.iter().any(|p| *p <= 0.0) {
-                        continue;
-                    }
                     if shifted.is_some() {
                         branch.shifted[i] = self.shift(book, shift, &state, place.t_k).map(|(s, _)| s);
                     }
