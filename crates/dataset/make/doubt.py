@@ -78,6 +78,44 @@ LISTED = {
     ("NbO", False): (8, 3, "sources differ by 14 kJ"),
     ("NbO2", False): (4, 3, "sources differ by several kJ"),
     ("Cr2N", False): (8, 4, "one compilation; measured nitrogen pressures spread by a factor of 2"),
+    ("CH3CHO", True): (0.5, 0.3, "combustion calorimetry"),
+    ("HCOOH", True): (0.6, 0.3, "combustion calorimetry"),
+    ("C2H5OH", True): (0.5, 0.3, "combustion calorimetry"),
+    ("CH3", True): (0.4, 0.2, "spectroscopic"),
+    ("C2H", True): (2, 1, "spectroscopic; an older table is 89 kJ off"),
+    ("NH", True): (2, 0.1, "spectroscopic; an older table is 20 kJ off"),
+    ("TiN", False): (2, 0.5, "combustion calorimetry; sources within 2 kJ"),
+    ("TiC", False): (2, 0.5, "combustion calorimetry; sources within 2 kJ"),
+    ("TaC", False): (2.5, 1, "combustion calorimetry"),
+    ("ZrC", False): (3, 1, "combustion calorimetry; varies with composition"),
+    ("SiC", False): (3, 0.5, "sources differ by several kJ"),
+    ("AlN", False): (1.5, 0.5, "sources agree within 1.5 kJ"),
+    ("NH4Cl", False): (0.5, 0.5, "calorimetry, well known"),
+    ("H2SO4", False): (0.7, 0.5, "calorimetry, well known"),
+    ("FeCl2", False): (1.5, 1, "calorimetry"),
+    ("NiCl2", False): (2, 1, "calorimetry"),
+    ("CoCl2", False): (2.5, 1, "calorimetry"),
+    ("Mg2SiO4", False): (2, 0.5, "sources within 4 kJ"),
+    ("MgSiO3", False): (2.5, 0.5, "sources within 5 kJ"),
+    ("MgAl2O4", False): (2, 1, "sources within 2 kJ; disorder when hot"),
+    ("Al2SiO5", False): (2, 0.5, "sources within 3 kJ"),
+    ("FeS2", False): (2, 1, "sources within several kJ"),
+    ("FeS", False): (1.5, 1, "sources differ by 2 kJ"),
+    ("Cr3C2", False): (6, 2, "old calorimetry; measured carbon activities differ by several kJ"),
+    ("Cr7C3", False): (10, 4, "old calorimetry; measured carbon activities differ by several kJ"),
+    ("Cr23C6", False): (18, 8, "old calorimetry; the set's own columns differ by 7 to 13 kJ"),
+    ("CuCl", False): (2, 1, "the later figure in another compilation is a slip and set aside"),
+    ("CuCl2", False): (5, 2, "sources differ by 12 kJ"),
+    ("CuF", False): (15, 4, "estimate"),
+    ("Cu(OH)2", False): (5, 5, "sources differ by 14 kJ and more"),
+    ("K2O2", False): (15, 5, "sources differ by 52 kJ"),
+    ("CoO", False): (1.0, 0.5, "sources within 1 kJ"),
+    ("Co3O4", False): (5, 3, "sources differ by 9 kJ"),
+    ("MoS2", False): (4, 2, "sources differ by 4 kJ"),
+    ("CoSO4", False): (6, 3, "sources differ by 11 kJ when hot"),
+    ("HCHO", True): (0.6, 0.1, "combustion calorimetry; an older table is 7 kJ off"),
+    ("TiCl4", False): (3, 1, "calorimetry; the entropy in an older table is wrong"),
+    ("W", False): (0, 0.15, "element in its reference state"),
     ("CrN", False): (6, 3, "one compilation; measured nitrogen pressures spread by a factor of 2"),
 }
 
@@ -103,7 +141,7 @@ def of(formula, gas, h298, s298, code):
     table = CODATA_GAS if gas else CODATA_SOLID
     if formula in table:
         return (*table[formula], "CODATA key value")
-    other = janaf_fit.spread(formula, gas)
+    other = janaf_fit.spread(formula, gas, float(h298))
     size = sum(n.values())
     floor = 2.0 if size <= 4 else 3.0
     if other and not code.startswith("j"):

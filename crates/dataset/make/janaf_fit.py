@@ -74,8 +74,9 @@ def by_counts():
     return found
 
 
-def spread(formula, gas):
-    """(dfH298, S298, table) of the tables for a formula: the lowest dfH298 among its condensed tables."""
+def spread(formula, gas, near=None):
+    """(dfH298, S298, table) of the tables for a formula: the lowest dfH298 among its condensed tables, for a gas
+    the one nearest to `near`, since isomers share a formula."""
     key = (tuple(sorted(counts(formula).items())), gas)
     best = None
     for number in by_counts().get(key, []):
@@ -89,7 +90,7 @@ def spread(formula, gas):
             continue
         if h is None or s is None:
             continue
-        if best is None or h < best[0]:
+        if best is None or (abs(h - near) < abs(best[0] - near) if gas and near is not None else h < best[0]):
             best = (h, s, number)
     return best
 
@@ -146,7 +147,7 @@ def exponents_for(points):
     n = len(points)
     if all(abs(p[1] - points[0][1]) < 2e-3 for p in points):
         return [0]
-    for count, choice in ((12, [-2, -1, 0, 1, 2, 3]), (8, [-2, 0, 1, 2, -1]), (5, [-2, 0, 1]), (3, [0, 1])):
+    for count, choice in ((8, [-2, -1, 0, 1, 2, 3]), (5, [-2, -1, 0, 1, 2]), (4, [-2, 0, 1, 2]), (3, [0, 1, 2]), (2, [0, 1])):
         if n >= count:
             return choice
     return [0]
