@@ -461,6 +461,7 @@ def oxides():
     for formula, name, H, S, cp, Tc, smax, high, evidence in (
         ("Fe3O4", "magnetite", "-1114.51", "146.9", ("0.2625", "-0.7205", "-1926.2", "-1.6557"), 848, 35, 1870, (2.0, 1.5, "sets differ by 4 kJ")),
         ("Fe2O3", "hematite", "-825.65", "87.4", ("0.1639", 0, "-2257.2", "-0.6576"), 955, "15.6", 1735, (1.0, 1.0, "sets differ by 2 kJ")),
+        ("Ca2SiO4", "larnite", "-2307.04", "127.6", ("0.2475", "-0.3206", 0, "-2.0519"), 1710, "10.03", 1900, WIDE),
         ("MgFe2O4", "magnesioferrite", "-1442.29", "121", ("0.2705", "-0.7505", "-999.2", "-2.0224"), 665, 17, 1900, WIDE),
     ):
         phase, worst = landau(H, S, hp(*cp), Tc, smax, high, name, Tc - 120)
