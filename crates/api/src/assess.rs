@@ -1,7 +1,8 @@
 //! The findings as answers: figures with names that carry units, sentences beside them.
 
 use crate::response::{
-    Arithmetic, Assessment, Change, Counts, CoursePoint, Finding, Lever, Note, Remedy, Share, Shifted, Summary, Used, Zone,
+    Arithmetic, Assessment, Change, Counts, CoursePoint, Finding, Lever, Note, Remedy, Share, Shifted, Summary, Used,
+    Zone,
 };
 use crate::{cautions, problem, words};
 use alloc::collections::BTreeMap;
@@ -10,7 +11,9 @@ use alloc::vec::Vec;
 use leeway_findings::activity::{From, Missing};
 use leeway_findings::compiled::Carrier;
 use leeway_findings::fan::ZoneGas;
-use leeway_findings::judge::{Assessed, Case, Finding as Found, Ground, NoData, Outcome, Source, Standing, Supply, Why};
+use leeway_findings::judge::{
+    Assessed, Case, Finding as Found, Ground, NoData, Outcome, Source, Standing, Supply, Why,
+};
 use leeway_findings::lever::What;
 use leeway_gas::humidity::frost_point_k;
 use leeway_gas::reading::Surface;
@@ -85,7 +88,8 @@ pub(crate) fn short_equation(reaction: &leeway_reactions::Reaction) -> String {
     };
     let or_gas = |list: Vec<String>, left: bool| {
         if list.is_empty() {
-            let gas: Vec<String> = reaction.used.iter().filter(|u| (u.nu < 0.0) == left).map(|u| u.formula.clone()).collect();
+            let gas: Vec<String> =
+                reaction.used.iter().filter(|u| (u.nu < 0.0) == left).map(|u| u.formula.clone()).collect();
             gas.join(" + ")
         } else {
             list.join(" + ")
@@ -236,11 +240,15 @@ impl Teller<'_> {
                     words::list(missing)
                 )
             }
-            NoData::ReadsZero(f) => alloc::format!("{f} reads zero: give the detection limit instead, as an upper bound"),
+            NoData::ReadsZero(f) => {
+                alloc::format!("{f} reads zero: give the detection limit instead, as an upper bound")
+            }
             NoData::Activity(Missing::Carbon) => {
                 "Carbon in an alloy does not follow its mole fraction: give its activity with the charge".to_string()
             }
-            NoData::Activity(Missing::Share(f)) => alloc::format!("{f} has neither a mass share nor an activity: give one with the charge"),
+            NoData::Activity(Missing::Share(f)) => {
+                alloc::format!("{f} has neither a mass share nor an activity: give one with the charge")
+            }
             NoData::Data(e) => {
                 let text = e.to_string();
                 text.strip_prefix("the data").map_or(text.clone(), |t| alloc::format!("The data{t}"))
@@ -301,7 +309,11 @@ impl Teller<'_> {
         answer.course = outcome
             .course
             .iter()
-            .map(|p| CoursePoint { temperature_k: p.t_k, dg_kj: p.dg_kj, standing: standing_text(p.standing).to_string() })
+            .map(|p| CoursePoint {
+                temperature_k: p.t_k,
+                dg_kj: p.dg_kj,
+                standing: standing_text(p.standing).to_string(),
+            })
             .collect();
         answer.seconds_past_turn = outcome.seconds_past;
         answer.sentence = self.sentence(answer, case, outcome);
@@ -311,14 +323,22 @@ impl Teller<'_> {
     fn notes(&self, answer: &mut Finding, case: &Case, outcome: &Outcome, reaction: &leeway_reactions::Reaction) {
         match outcome.carrier {
             Carrier::Written => {}
-            Carrier::Water => answer.notes.push("Oxygen is taken from H2O over H2 at the temperature judged".to_string()),
-            Carrier::Dioxide => answer.notes.push("Oxygen is taken from CO2 over CO at the temperature judged".to_string()),
+            Carrier::Water => {
+                answer.notes.push("Oxygen is taken from H2O over H2 at the temperature judged".to_string())
+            }
+            Carrier::Dioxide => {
+                answer.notes.push("Oxygen is taken from CO2 over CO at the temperature judged".to_string())
+            }
         }
         if let Some(f) = &outcome.at_limit {
-            answer.notes.push(alloc::format!("{f} stands at its detection limit: only a verdict that less {f} cannot overturn is given"));
+            answer.notes.push(alloc::format!(
+                "{f} stands at its detection limit: only a verdict that less {f} cannot overturn is given"
+            ));
         }
         if outcome.read.doubt.nonlinear {
-            answer.notes.push("A contributor to the doubt acts in a curve: the doubt and the chance are rough".to_string());
+            answer
+                .notes
+                .push("A contributor to the doubt acts in a curve: the doubt and the chance are rough".to_string());
         }
         if outcome.cut {
             answer.notes.push("Part of the course lies outside the data and is not judged".to_string());
@@ -338,12 +358,14 @@ impl Teller<'_> {
         if let Some((gas, _, _)) = &outcome.shifted
             && gas.standing != outcome.read.standing
         {
-            answer.notes.push(alloc::format!(
-                "Shifted, the gas gives another standing: {}",
-                standing_text(gas.standing)
-            ));
+            answer
+                .notes
+                .push(alloc::format!("Shifted, the gas gives another standing: {}", standing_text(gas.standing)));
         }
-        if case.change.allowed.is_some() && case.zone.leaving.is_some() && !matches!(outcome.place.why, Why::Allowed(..) | Why::TooCold) {
+        if case.change.allowed.is_some()
+            && case.zone.leaving.is_some()
+            && !matches!(outcome.place.why, Why::Allowed(..) | Why::TooCold)
+        {
             answer.notes.push("The allowed time needs a rate in the zone and a temperature the change acts above; the worst place is judged instead".to_string());
         }
         answer.notes.extend(beside_note(self.book, reaction));
@@ -363,10 +385,14 @@ impl Teller<'_> {
             ),
             (What::Pressure, _) => "not proposed: the shell's own limits come first".to_string(),
             (What::Activity(..), _) => "not proposed: the charge's own".to_string(),
-            (What::DewPoint(_), _) => "only drier is proposed: wetting is for the plant's own interlocked humidifier".to_string(),
+            (What::DewPoint(_), _) => {
+                "only drier is proposed: wetting is for the plant's own interlocked humidifier".to_string()
+            }
             (What::Gas(_, f), _) if !lever.allowed.up => alloc::format!("only less {f} is proposed"),
             (What::Gas(_, f), _) => alloc::format!("only more {f} is proposed"),
-            (What::Temperature, _) if outcome.place.why != Why::Zone => "not proposed: the place on a course is judged".to_string(),
+            (What::Temperature, _) if outcome.place.why != Why::Zone => {
+                "not proposed: the place on a course is judged".to_string()
+            }
             _ => String::new(),
         };
         Lever {
@@ -412,7 +438,9 @@ impl Teller<'_> {
                 let taken = outcome.bound.activities.iter().find(|(i, _)| *i == n).map(|(_, t)| t);
                 let (activity, from) = match supply {
                     Supply::Gas(i) => (state(*i), "partial pressure".to_string()),
-                    Supply::Fixed(ln_a) => (leeway_quantity::math::exp(*ln_a), taken.map_or_else(String::new, activity_from)),
+                    Supply::Fixed(ln_a) => {
+                        (leeway_quantity::math::exp(*ln_a), taken.map_or_else(String::new, activity_from))
+                    }
                 };
                 Used {
                     formula: used.formula.clone(),
@@ -449,9 +477,13 @@ impl Teller<'_> {
             )
         };
         match outcome.read.standing {
-            Standing::OnSide if case.change.wish == Wish::Avoid => alloc::format!("{change}: not in {zone}; {}", how_far(true)),
+            Standing::OnSide if case.change.wish == Wish::Avoid => {
+                alloc::format!("{change}: not in {zone}; {}", how_far(true))
+            }
             Standing::OnSide => alloc::format!("{change} in {zone}; {}", how_far(true)),
-            Standing::OffSide if case.change.wish == Wish::Avoid => alloc::format!("{change} in {zone}: {}", how_far(false)),
+            Standing::OffSide if case.change.wish == Wish::Avoid => {
+                alloc::format!("{change} in {zone}: {}", how_far(false))
+            }
             Standing::OffSide => alloc::format!("{change}: not in {zone}; {}", how_far(false)),
             Standing::TooClose => match answer.chance_wrong {
                 Some(chance) if outcome.at_limit.is_none() => alloc::format!(
@@ -481,7 +513,9 @@ impl Teller<'_> {
             }
         }
         let tolerated = |f: &&Finding| self.line.changes[f.change_index].tolerated;
-        let of = |standing: &str| -> Vec<&Finding> { findings.iter().filter(|f| f.standing == standing && !tolerated(f)).collect() };
+        let of = |standing: &str| -> Vec<&Finding> {
+            findings.iter().filter(|f| f.standing == standing && !tolerated(f)).collect()
+        };
         let (off, close) = (of("off side"), of("too close to call"));
         let worst = off
             .iter()
@@ -514,7 +548,8 @@ impl Teller<'_> {
             groups.sort_by_key(|(c, _)| *c != first);
             let (c, zones) = &groups[0];
             let mut text = fails(*c, zones);
-            let close_too: Vec<String> = close.iter().filter(|f| f.change_index == *c).map(|f| f.zone.clone()).collect();
+            let close_too: Vec<String> =
+                close.iter().filter(|f| f.change_index == *c).map(|f| f.zone.clone()).collect();
             if !close_too.is_empty() {
                 text += &alloc::format!("; in {} it is too close to call", words::list(&close_too));
             }
@@ -526,7 +561,11 @@ impl Teller<'_> {
             }
         } else if !close.is_empty() {
             let groups = by_change(&close);
-            let parts: Vec<String> = groups.iter().take(2).map(|(c, zones)| alloc::format!("{} in {}", name(*c), words::list(zones))).collect();
+            let parts: Vec<String> = groups
+                .iter()
+                .take(2)
+                .map(|(c, zones)| alloc::format!("{} in {}", name(*c), words::list(zones)))
+                .collect();
             let more = if groups.len() > 2 { alloc::format!(" ({} more)", groups.len() - 2) } else { String::new() };
             alloc::format!("Nothing is off side; too close to call: {}{more}.", parts.join("; "))
         } else {
@@ -536,7 +575,9 @@ impl Teller<'_> {
                 .min_by(|a, b| a.leeway_u.unwrap_or(f64::MAX).total_cmp(&b.leeway_u.unwrap_or(f64::MAX)));
             match nearest {
                 Some(f) => alloc::format!("Nothing is off side. The nearest: {}.", words::lower_first(&f.sentence)),
-                None if counts.no_data == findings.len() => "No finding: the data or readings do not reach.".to_string(),
+                None if counts.no_data == findings.len() => {
+                    "No finding: the data or readings do not reach.".to_string()
+                }
                 None => "Nothing is off side.".to_string(),
             }
         };
@@ -544,11 +585,19 @@ impl Teller<'_> {
             let f = &findings[w];
             let first = f.remedies.first()?;
             let back = if f.standing == "off side" { "brings it back beyond doubt" } else { "puts it beyond doubt" };
-            let others = if off.len() + close.len() > 1 { alloc::format!(" (worst: {} in {})", f.change, f.zone) } else { String::new() };
+            let others = if off.len() + close.len() > 1 {
+                alloc::format!(" (worst: {} in {})", f.change, f.zone)
+            } else {
+                String::new()
+            };
             Some(alloc::format!("{} {back}{others}, all else held.", first.sentence))
         });
         let remedy = remedy.unwrap_or_else(|| {
-            if worst.is_some() { "No single allowed lever brings the worst one back; see its levers.".to_string() } else { String::new() }
+            if worst.is_some() {
+                "No single allowed lever brings the worst one back; see its levers.".to_string()
+            } else {
+                String::new()
+            }
         });
         Summary { sentence, remedy, worst, counts }
     }
@@ -580,7 +629,9 @@ fn beside_note(book: &Book, reaction: &leeway_reactions::Reaction) -> Option<Str
 fn judged_why(why: Why) -> String {
     match why {
         Why::Zone => String::new(),
-        Why::Worst(low, high) => alloc::format!("the worst place between {} and {}", words::celsius(low), words::celsius(high)),
+        Why::Worst(low, high) => {
+            alloc::format!("the worst place between {} and {}", words::celsius(low), words::celsius(high))
+        }
         Why::Allowed(seconds, rate, floor) => alloc::format!(
             "{}{}s before {} at {}{}K/s",
             words::number(seconds, 4),
@@ -607,7 +658,11 @@ fn held(case: &Case, outcome: &Outcome, what: &What) -> String {
             _ => false,
         };
         if !own && input.lever.is_some() {
-            let name = if input.lever.as_deref() == Some("dew_point") { input.label.clone() } else { input.lever.clone().unwrap_or_default() };
+            let name = if input.lever.as_deref() == Some("dew_point") {
+                input.label.clone()
+            } else {
+                input.lever.clone().unwrap_or_default()
+            };
             parts.push(alloc::format!("{name} {}", words::value(input.quantity.given, input.quantity.unit)));
         }
     }
@@ -648,7 +703,9 @@ fn measure_next(case: &Case, outcome: &Outcome, k: f64) -> String {
     if variance <= 0.0 || outcome.leeway_u().is_some_and(|z| z.abs() > 3.0 * k) {
         return String::new();
     }
-    let Some((source, c)) = doubt.shares.iter().max_by(|a, b| a.1.abs().total_cmp(&b.1.abs())) else { return String::new() };
+    let Some((source, c)) = doubt.shares.iter().max_by(|a, b| a.1.abs().total_cmp(&b.1.abs())) else {
+        return String::new();
+    };
     let without = leeway_quantity::math::sqrt((variance - 0.75 * c * c).max(0.0));
     let gain = alloc::format!(
         "halving it takes the doubt from {} to {}{}kJ",
@@ -657,11 +714,20 @@ fn measure_next(case: &Case, outcome: &Outcome, k: f64) -> String {
         words::THIN
     );
     let what = match source {
-        Source::Data(f) => return alloc::format!("The data of {f} weigh most: no instrument of the line can shrink that."),
+        Source::Data(f) => {
+            return alloc::format!("The data of {f} weigh most: no instrument of the line can shrink that.");
+        }
         Source::Activity(f) => alloc::format!("Pin the activity of {f} first, with a coupon or a published figure"),
         other => alloc::format!("A better {} comes first", case.source_label(other)),
     };
-    let least = doubt.shares.iter().filter(|(s, c)| matches!(s, Source::Temperature | Source::Input(_) | Source::Pressure) && c * c < 0.02 * variance).map(|(s, _)| case.source_label(s)).next();
+    let least = doubt
+        .shares
+        .iter()
+        .filter(|(s, c)| {
+            matches!(s, Source::Temperature | Source::Input(_) | Source::Pressure) && c * c < 0.02 * variance
+        })
+        .map(|(s, _)| case.source_label(s))
+        .next();
     let gains_nothing = least.map_or_else(String::new, |l| alloc::format!(" A better {l} gains nothing."));
     alloc::format!("{what}: {gain}.{gains_nothing}")
 }
@@ -712,7 +778,9 @@ fn arithmetic(outcome: &Outcome, used: &[Used]) -> Arithmetic {
 pub(crate) fn proposal_name(book: &Book, p: &leeway_findings::propose::Proposal) -> (String, &'static str) {
     use leeway_findings::propose::Kind as Does;
     let name = |formula: &str| {
-        let first = book.find(formula).map(|i| book.substances[i].name.split([',', ';']).next().unwrap_or("").trim().to_string());
+        let first = book
+            .find(formula)
+            .map(|i| book.substances[i].name.split([',', ';']).next().unwrap_or("").trim().to_string());
         first.filter(|n| !n.is_empty() && n.len() <= 24).unwrap_or_else(|| formula.to_string())
     };
     let title = |text: String| {

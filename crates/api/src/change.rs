@@ -17,12 +17,17 @@ const LN_10: f64 = core::f64::consts::LN_10;
 /// Evaluates a reaction at every temperature asked for.
 pub(crate) fn change(book: &Book, request: &ChangeRequest) -> Result<Vec<Reaction>, Problem> {
     let place = || String::from("equation");
-    let equation = Equation::parse(&request.equation).map_err(|e| problem::equation(&e, request.equation.clone(), place()))?;
+    let equation =
+        Equation::parse(&request.equation).map_err(|e| problem::equation(&e, request.equation.clone(), place()))?;
     let joined = match (&request.dh, &request.ds) {
-        (None, None) => Joined::new(book, &equation).map_err(|e| problem::reaction(book, &e, request.equation.clone(), place()))?,
-        (Some(dh), Some(ds)) => {
-            Joined::from_constants(&equation, energy(dh, "dh", &[("kJ", 1.0), ("kJ/mol", 1.0), ("J", 1e-3), ("J/mol", 1e-3)])?, energy(ds, "ds", &[("J/K", 1.0), ("J/(mol K)", 1.0), ("kJ/K", 1e3), ("kJ/(mol K)", 1e3)])?)
+        (None, None) => {
+            Joined::new(book, &equation).map_err(|e| problem::reaction(book, &e, request.equation.clone(), place()))?
         }
+        (Some(dh), Some(ds)) => Joined::from_constants(
+            &equation,
+            energy(dh, "dh", &[("kJ", 1.0), ("kJ/mol", 1.0), ("J", 1e-3), ("J/mol", 1e-3)])?,
+            energy(ds, "ds", &[("J/K", 1.0), ("J/(mol K)", 1.0), ("kJ/K", 1e3), ("kJ/(mol K)", 1e3)])?,
+        ),
         _ => {
             return Err(Problem {
                 code: "change.constants".to_string(),
@@ -39,7 +44,8 @@ pub(crate) fn change(book: &Book, request: &ChangeRequest) -> Result<Vec<Reactio
     for text in &request.activities {
         activities.push(activity(text, &equation)?);
     }
-    let value_of = |u: &str, formula: &str| activities.iter().find(|(f, _)| f == u || f == formula).map_or(1.0, |(_, a)| *a);
+    let value_of =
+        |u: &str, formula: &str| activities.iter().find(|(f, _)| f == u || f == formula).map_or(1.0, |(_, a)| *a);
     let ln_q: f64 = equation
         .terms
         .iter()
@@ -52,9 +58,8 @@ pub(crate) fn change(book: &Book, request: &ChangeRequest) -> Result<Vec<Reactio
     let range = joined.range_k();
     let mut at: Vec<f64> = Vec::new();
     for text in &request.at {
-        let typed = entry::parse(text, Kind::Temperature, Unit::Celsius).map_err(|e| {
-            problem::from_text("number", text.clone(), String::from("at"), e.to_string(), e.hints())
-        })?;
+        let typed = entry::parse(text, Kind::Temperature, Unit::Celsius)
+            .map_err(|e| problem::from_text("number", text.clone(), String::from("at"), e.to_string(), e.hints()))?;
         at.push(typed.quantity.value);
     }
     if at.is_empty() {
@@ -62,8 +67,9 @@ pub(crate) fn change(book: &Book, request: &ChangeRequest) -> Result<Vec<Reactio
     }
     at.into_iter()
         .map(|t| {
-            let chosen =
-                joined.choose(book, t).map_err(|e| problem::lookup(book, &e, words::celsius(t), String::from("temperature")))?;
+            let chosen = joined
+                .choose(book, t)
+                .map_err(|e| problem::lookup(book, &e, words::celsius(t), String::from("temperature")))?;
             let sum = joined.sum(t, &chosen);
             let rt = GAS_CONSTANT * KJ_PER_J * t;
             let (u_dh, u_ds) = joined.u_dh_ds(book, &chosen);
@@ -168,14 +174,18 @@ fn activity(text: &str, equation: &Equation) -> Result<(String, f64), Problem> {
         let message = alloc::format!("found {found}, expected {expected}");
         problem::from_text("activity", text.to_string(), String::from("activity"), message, Vec::new())
     };
-    let (name, value) = text.split_once('=').ok_or_else(|| fail(alloc::format!("\u{201c}{text}\u{201d}"), "FORMULA=VALUE, for example H2O=0.01"))?;
+    let (name, value) = text
+        .split_once('=')
+        .ok_or_else(|| fail(alloc::format!("\u{201c}{text}\u{201d}"), "FORMULA=VALUE, for example H2O=0.01"))?;
     let name = name.trim();
     let species = Species::parse(name).map_err(|e| fail(alloc::format!("\u{201c}{name}\u{201d}"), &e.to_string()))?;
-    let known = equation.terms.iter().any(|t| t.species.text() == species.text() || t.species.formula.text() == species.text());
+    let known =
+        equation.terms.iter().any(|t| t.species.text() == species.text() || t.species.formula.text() == species.text());
     if !known {
         return Err(fail(name.to_string(), &alloc::format!("a substance of {}", equation.text())));
     }
-    let value = entry::number(value).map_err(|e| fail(alloc::format!("\u{201c}{}\u{201d}", value.trim()), &e.to_string()))?;
+    let value =
+        entry::number(value).map_err(|e| fail(alloc::format!("\u{201c}{}\u{201d}", value.trim()), &e.to_string()))?;
     if !(value.is_finite() && value > 0.0) {
         return Err(fail(alloc::format!("{value}"), "an activity above 0, or a partial pressure in bar above 0"));
     }
@@ -190,9 +200,15 @@ fn energy(text: &str, name: &str, units: &[(&str, f64)]) -> Result<f64, Problem>
         problem::from_text("change.constants", text.to_string(), name.to_string(), message, Vec::new())
     };
     let text = text.trim();
-    let split = text.find(|c: char| c.is_alphabetic() && c != 'e' && c != 'E').ok_or_else(|| fail(alloc::format!("\u{201c}{text}\u{201d} without a unit")))?;
+    let split = text
+        .find(|c: char| c.is_alphabetic() && c != 'e' && c != 'E')
+        .ok_or_else(|| fail(alloc::format!("\u{201c}{text}\u{201d} without a unit")))?;
     let (number, unit) = (text[..split].trim(), text[split..].trim());
-    let factor = units.iter().find(|(u, _)| *u == unit).map(|(_, f)| *f).ok_or_else(|| fail(alloc::format!("the unit \u{201c}{unit}\u{201d}")))?;
+    let factor = units
+        .iter()
+        .find(|(u, _)| *u == unit)
+        .map(|(_, f)| *f)
+        .ok_or_else(|| fail(alloc::format!("the unit \u{201c}{unit}\u{201d}")))?;
     let value = entry::number(number).map_err(|_| fail(alloc::format!("\u{201c}{number}\u{201d}")))?;
     Ok(value * factor)
 }

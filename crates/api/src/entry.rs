@@ -57,7 +57,13 @@ pub(crate) fn read_entry(request: &EntryRequest) -> Result<Entry, Problem> {
     }
     if typed.bound && field != "gas" {
         let message = "found \u{201c}<\u{201d}, expected a reading; only a gas can stand at its detection limit";
-        return Err(problem::from_text("entry.bound", field.to_string(), String::new(), message.to_string(), alloc::vec![]));
+        return Err(problem::from_text(
+            "entry.bound",
+            field.to_string(),
+            String::new(),
+            message.to_string(),
+            alloc::vec![],
+        ));
     }
     Ok(quantity(request, &typed, field))
 }
@@ -73,7 +79,12 @@ fn plain(field: &str, value: f64) -> Result<Entry, Problem> {
         let message = alloc::format!("found {value}, expected {expected}");
         return Err(problem::from_text("entry.value", field.to_string(), String::new(), message, alloc::vec![]));
     }
-    Ok(Entry { quantity: json!(value), field: field.to_string(), read_back: words::number(value, 6), consequence: String::new() })
+    Ok(Entry {
+        quantity: json!(value),
+        field: field.to_string(),
+        read_back: words::number(value, 6),
+        consequence: String::new(),
+    })
 }
 
 fn quantity(request: &EntryRequest, typed: &Typed, asked: &str) -> Entry {
@@ -134,7 +145,13 @@ fn consequence(request: &EntryRequest, typed: &Typed, is_dew: bool, over: Surfac
         if middle >= 1.0 {
             return alloc::format!("that is more water than gas at {}{}bar", words::number(p, 4), words::THIN);
         }
-        let text = |x: f64| if x < 1e-2 { alloc::format!("{}{}ppm", words::number(x * 1e6, 3), words::THIN) } else { alloc::format!("{}{}%", words::number(x * 100.0, 3), words::THIN) };
+        let text = |x: f64| {
+            if x < 1e-2 {
+                alloc::format!("{}{}ppm", words::number(x * 1e6, 3), words::THIN)
+            } else {
+                alloc::format!("{}{}%", words::number(x * 100.0, 3), words::THIN)
+            }
+        };
         let around = tolerance
             .map(|t| t * q.unit.step())
             .and_then(|half| Some((share(q.value - half)?, share(q.value + half)?)))
@@ -143,7 +160,9 @@ fn consequence(request: &EntryRequest, typed: &Typed, is_dew: bool, over: Surfac
     }
     if request.field == "dew_point" {
         let bar = if q.unit.kind() == Kind::Pressure { q.value } else { q.value * p };
-        return frost_point_k(bar, Surface::Ice).map_or_else(String::new, |t| alloc::format!("frost point {} at {}{}bar", words::celsius(t), words::number(p, 4), words::THIN));
+        return frost_point_k(bar, Surface::Ice).map_or_else(String::new, |t| {
+            alloc::format!("frost point {} at {}{}bar", words::celsius(t), words::number(p, 4), words::THIN)
+        });
     }
     String::new()
 }

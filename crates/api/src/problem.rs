@@ -18,7 +18,13 @@ pub(crate) fn from_text(code: &str, at: String, place: String, message: String, 
 }
 
 pub(crate) fn data(error: &DataError) -> Problem {
-    from_text("data.line", String::new(), alloc::format!("data file, line {}", error.line), error.to_string(), Vec::new())
+    from_text(
+        "data.line",
+        String::new(),
+        alloc::format!("data file, line {}", error.line),
+        error.to_string(),
+        Vec::new(),
+    )
 }
 
 pub(crate) fn file(error: FileError) -> Problem {
@@ -35,13 +41,25 @@ pub(crate) fn file(error: FileError) -> Problem {
 
 pub(crate) fn gas(error: &GasProblem, zone: usize, name: &str) -> Problem {
     let hints = match error {
-        GasProblem::Sum { balance: false, .. } => alloc::vec!["Name the balance gas, or give the missing component".to_string()],
+        GasProblem::Sum { balance: false, .. } => {
+            alloc::vec!["Name the balance gas, or give the missing component".to_string()]
+        }
         GasProblem::Sum { .. } => alloc::vec!["Check which channel reads dry and which wet, and the units".to_string()],
-        GasProblem::NoBasis { .. } => alloc::vec!["Say \u{201c}basis\u{201d}: \u{201c}dry\u{201d} for a gas cooled and dried before the analyser".to_string()],
-        GasProblem::DewPoint { .. } | GasProblem::AllWater { .. } => alloc::vec!["Check the sign and the unit of the dew point, or give the water as a share".to_string()],
+        GasProblem::NoBasis { .. } => alloc::vec![
+            "Say \u{201c}basis\u{201d}: \u{201c}dry\u{201d} for a gas cooled and dried before the analyser".to_string()
+        ],
+        GasProblem::DewPoint { .. } | GasProblem::AllWater { .. } => {
+            alloc::vec!["Check the sign and the unit of the dew point, or give the water as a share".to_string()]
+        }
         _ => Vec::new(),
     };
-    from_text("gas", alloc::format!("zones[{zone}].gas"), alloc::format!("zone {}, {name}", zone + 1), error.to_string(), hints)
+    from_text(
+        "gas",
+        alloc::format!("zones[{zone}].gas"),
+        alloc::format!("zone {}, {name}", zone + 1),
+        error.to_string(),
+        hints,
+    )
 }
 
 pub(crate) fn change(book: &Book, error: &ChangeProblem, index: usize, name: &str) -> Problem {
@@ -60,7 +78,9 @@ pub(crate) fn equation(error: &EquationError, at: String, place: String) -> Prob
         EquationError::Sides { .. } => ("equation.sides", alloc::vec!["Write it as 2 Cr + 1.5 O2 = Cr2O3".to_string()]),
         EquationError::Species { .. } => ("equation.formula", Vec::new()),
         EquationError::Coefficient { .. } => ("equation.coefficient", Vec::new()),
-        EquationError::Unbalanced { .. } => ("equation.unbalanced", alloc::vec!["Leave all coefficients out to have it balanced".to_string()]),
+        EquationError::Unbalanced { .. } => {
+            ("equation.unbalanced", alloc::vec!["Leave all coefficients out to have it balanced".to_string()])
+        }
         EquationError::Unbalanceable { .. } => ("equation.unbalanceable", Vec::new()),
         EquationError::Ambiguous { ways } => ("equation.ambiguous", ways.clone()),
         EquationError::Sum { .. } => ("equation.sum", alloc::vec!["Write a sum as 2*(A = B) - (C = D)".to_string()]),
@@ -68,9 +88,15 @@ pub(crate) fn equation(error: &EquationError, at: String, place: String) -> Prob
     };
     let mut problem = from_text(code, at, place, error.to_string(), hints);
     match error {
-        EquationError::Unbalanced { .. } => problem.expected = "the same number of each element on both sides".to_string(),
-        EquationError::Unbalanceable { .. } => problem.expected = "an equation that some coefficients balance".to_string(),
-        EquationError::Ambiguous { .. } => problem.expected = "one balance; give the coefficients, or leave a substance out".to_string(),
+        EquationError::Unbalanced { .. } => {
+            problem.expected = "the same number of each element on both sides".to_string()
+        }
+        EquationError::Unbalanceable { .. } => {
+            problem.expected = "an equation that some coefficients balance".to_string()
+        }
+        EquationError::Ambiguous { .. } => {
+            problem.expected = "one balance; give the coefficients, or leave a substance out".to_string()
+        }
         _ => {}
     }
     problem

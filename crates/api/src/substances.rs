@@ -1,7 +1,7 @@
 //! What the data hold: the list, and one substance with all its records and curves.
 
-use crate::response::{PhaseRow, Problem, SetRow, Substance, SubstanceRow};
 use crate::problem;
+use crate::response::{PhaseRow, Problem, SetRow, Substance, SubstanceRow};
 use alloc::string::{String, ToString};
 use alloc::vec::Vec;
 use leeway_quantity::constants::KJ_PER_J;
@@ -14,7 +14,8 @@ const POINTS: u16 = 60;
 /// substance may hold no other. Everything for an empty query.
 pub(crate) fn list(book: &Book, query: &str) -> Vec<SubstanceRow> {
     let query = query.trim();
-    let symbols: Option<Vec<Element>> = query.split([' ', ',', '-']).filter(|w| !w.is_empty()).map(Element::from_symbol).collect();
+    let symbols: Option<Vec<Element>> =
+        query.split([' ', ',', '-']).filter(|w| !w.is_empty()).map(Element::from_symbol).collect();
     let only = symbols.filter(|s| s.len() > 1);
     let lower = query.to_lowercase();
     let mut rows: Vec<(u8, SubstanceRow)> = book
@@ -24,9 +25,7 @@ pub(crate) fn list(book: &Book, query: &str) -> Vec<SubstanceRow> {
             let formula = s.formula.text();
             let rank = if let Some(only) = &only {
                 s.formula.counts().keys().all(|e| only.contains(e)).then_some(0)
-            } else if query.is_empty() {
-                Some(0)
-            } else if formula == query {
+            } else if query.is_empty() || formula == query {
                 Some(0)
             } else if formula.starts_with(query) {
                 Some(1)
@@ -37,7 +36,12 @@ pub(crate) fn list(book: &Book, query: &str) -> Vec<SubstanceRow> {
             } else {
                 None
             }?;
-            let phases = s.records.iter().filter(|r| r.preferred).flat_map(|r| r.phases.iter().map(|p| p.name.clone())).collect();
+            let phases = s
+                .records
+                .iter()
+                .filter(|r| r.preferred)
+                .flat_map(|r| r.phases.iter().map(|p| p.name.clone()))
+                .collect();
             Some((
                 rank,
                 SubstanceRow {

@@ -27,7 +27,11 @@ pub(crate) fn number(x: f64, digits: i32) -> String {
     let magnitude = floor(log10(x.abs()));
     if !(-4.0..6.0).contains(&magnitude) {
         let mantissa = x / exp10(magnitude);
-        return alloc::format!("{} \u{d7} 10^{}", minus(&trim(&alloc::format!("{mantissa:.*}", places(digits - 1)))), minus(&alloc::format!("{magnitude}")));
+        return alloc::format!(
+            "{} \u{d7} 10^{}",
+            minus(&trim(&alloc::format!("{mantissa:.*}", places(digits - 1)))),
+            minus(&alloc::format!("{magnitude}"))
+        );
     }
     #[expect(clippy::cast_possible_truncation, reason = "a magnitude of at most 6")]
     let decimals = (digits - 1 - magnitude as i32).max(0);
@@ -126,7 +130,9 @@ pub(crate) fn list(items: &[String]) -> String {
 pub(crate) fn lower_first(text: &str) -> String {
     let mut chars = text.chars();
     match (chars.next(), chars.next()) {
-        (Some(a), Some(b)) if a.is_uppercase() && b.is_lowercase() && !text.split(' ').next().is_some_and(|w| w.len() <= 2) => {
+        (Some(a), Some(b))
+            if a.is_uppercase() && b.is_lowercase() && text.split(' ').next().is_none_or(|w| w.len() > 2) =>
+        {
             a.to_lowercase().chain(text.chars().skip(1)).collect()
         }
         _ => text.to_string(),

@@ -1,2 +1,182 @@
-//! x
-fn main(){}
+//! The shell's binding: words to a request, the answer to text or JSON, an exit code. It decides nothing.
+
+mod args;
+mod files;
+mod paper;
+
+use args::{Args, Colour, Command};
+use clap::Parser;
+use leeway_api::Session;
+use leeway_api::request::ChangeRequest;
+use leeway_api::response::{Assessment, Problem};
+use paper::Paper;
+use serde::Serialize;
+use std::io::{IsTerminal, Write};
+use std::path::Path;
+use std::process::ExitCode;
+
+/// Bad input.
+const BAD_INPUT: u8 = 2;
+/// A finding is off side, asked for strictly.
+const OFF_SIDE: u8 = 1;
+
+fn main() -> ExitCode {
+    let args = Args::parse();
+    let wanted = |terminal: bool| match args.color {
+        Colour::Always => true,
+        Colour::Never => false,
+        Colour::Auto => terminal && std::env::var_os("NO_COLOR").is_none_or(|v| v.is_empty()),
+    };
+    let colour = wanted(std::io::stdout().is_terminal());
+    let file = match &args.command {
+        Command::Assess { line, .. } | Command::Propose { line, .. } => line.display().to_string(),
+        _ => String::new(),
+    };
+    match run(&args.command, colour) {
+        Ok((text, code)) => write_out(&text, code),
+        Err(problems) => {
+            let mut paper = Paper::new(false);
+            for p in &problems {
+                paper.problem(&file, p);
+            }
+            // A closed standard error leaves nothing to say it to.
+            let _ = std::io::stderr().write_all(paper.into_text().as_bytes());
+            ExitCode::from(BAD_INPUT)
+        }
+    }
+}
+
+/// Writes to standard output; a reader that went away is no fault of ours.
+fn write_out(text: &str, code: u8) -> ExitCode {
+    let mut out = std::io::stdout().lock();
+    let _ = out.write_all(text.as_bytes()).and_then(|()| out.flush());
+    ExitCode::from(code)
+}
+
+fn run(command: &Command, colour: bool) -> Result<(String, u8), Vec<Problem>> {
+    let one = |p: Problem| vec![p];
+    let session = Session::new(leeway_dataset::TEXT).map_err(one)?;
+    let mut paper = Paper::new(colour);
+    match command {
+        Command::Assess { line, json, strict, variant, zone, change } => {
+            let mut text = line_text(&session, line)?;
+            if let Some(name) = variant {
+                text = session.variant(&text, name).map_err(one)?;
+            }
+            let assessment = session.assess(&text).map_err(one)?;
+            let refused = refused(&assessment);
+            if !refused.is_empty() {
+                return Err(refused);
+            }
+            known_name(zone.as_deref(), assessment.zones.iter().map(|z| z.name.as_str()), "zone").map_err(one)?;
+            known_name(change.as_deref(), assessment.changes.iter().map(|c| c.name.as_str()), "change").map_err(one)?;
+            let code =
+                if *strict && assessment.summary.worst.is_some_and(|w| assessment.findings[w].standing == "off side") {
+                    OFF_SIDE
+                } else {
+                    0
+                };
+            if *json {
+                return Ok((as_json(&assessment)?, code));
+            }
+            paper.assessment(&assessment, zone.as_deref(), change.as_deref());
+            Ok((paper.into_text(), code))
+        }
+        Command::Change { equation, at, activity, dh, ds, json } => {
+            let request = ChangeRequest {
+                equation: equation.clone(),
+                at: at.clone(),
+                activities: activity.clone(),
+                dh: dh.clone(),
+                ds: ds.clone(),
+            };
+            let reactions = session.change(&request).map_err(one)?;
+            if *json {
+                return Ok((as_json(&reactions)?, 0));
+            }
+            paper.reactions(&reactions);
+            Ok((paper.into_text(), 0))
+        }
+        Command::Propose { line, json } => {
+            let proposals = session.propose(&line_text(&session, line)?).map_err(one)?;
+            if *json {
+                return Ok((as_json(&proposals)?, 0));
+            }
+            paper.proposals(&proposals);
+            Ok((paper.into_text(), 0))
+        }
+        Command::Substances { query, elements, json } => {
+            let exact = query.as_deref().filter(|q| elements.is_none() && session.book().find(q.trim()).is_some());
+            if let Some(formula) = exact {
+                let substance = session.substance(formula).map_err(one)?;
+                if *json {
+                    return Ok((as_json(&substance)?, 0));
+                }
+                paper.substance(&substance);
+                return Ok((paper.into_text(), 0));
+            }
+            let asked = elements.as_deref().or(query.as_deref()).unwrap_or("");
+            let rows = session.substances(asked);
+            if rows.is_empty() {
+                // The session's own words for a formula that is not held.
+                return Err(session.substance(asked).err().into_iter().collect());
+            }
+            if *json {
+                return Ok((as_json(&rows)?, 0));
+            }
+            paper.rows(&rows);
+            Ok((paper.into_text(), 0))
+        }
+    }
+}
+
+fn line_text(session: &Session, path: &Path) -> Result<String, Vec<Problem>> {
+    let bytes = files::read(path).map_err(|p| vec![p])?;
+    session.open(&bytes).map(|opened| opened.text).map_err(|p| vec![p])
+}
+
+/// Everything a line could not be taken for.
+fn refused(a: &Assessment) -> Vec<Problem> {
+    let zones = a.zones.iter().filter_map(|z| z.refused.clone());
+    zones.chain(a.changes.iter().filter_map(|c| c.refused.clone())).collect()
+}
+
+fn known_name<'n>(
+    asked: Option<&str>,
+    mut names: impl Iterator<Item = &'n str> + Clone,
+    what: &str,
+) -> Result<(), Problem> {
+    let Some(asked) = asked else { return Ok(()) };
+    let all = names.clone().collect::<Vec<_>>().join("; ");
+    if names.any(|n| n == asked) {
+        return Ok(());
+    }
+    Err(Problem {
+        code: "line.name".to_owned(),
+        at: String::new(),
+        place: what.to_owned(),
+        message: format!("found the {what} \u{201c}{asked}\u{201d}, expected one of: {all}"),
+        found: asked.to_owned(),
+        expected: all,
+        hints: Vec::new(),
+    })
+}
+
+fn as_json<T: Serialize>(value: &T) -> Result<String, Vec<Problem>> {
+    serde_json::to_string_pretty(value)
+        .map(|mut t| {
+            t.push('\n');
+            t
+        })
+        .map_err(|e| {
+            vec![Problem {
+                code: "json".to_owned(),
+                at: String::new(),
+                place: String::new(),
+                message: e.to_string(),
+                found: String::new(),
+                expected: String::new(),
+                hints: Vec::new(),
+            }]
+        })
+}

@@ -60,7 +60,10 @@ pub fn cautions(line: &Line, assessed: &Assessed) -> alloc::vec::Vec<Caution> {
     for (zone, gas) in line.zones.iter().zip(&assessed.gases) {
         let Ok((gas, fan)) = gas else { continue };
         let share = |f: &str| {
-            gas.species.iter().position(|s| s == f).map_or(0.0, |i| if fan.read[i].is_finite() { fan.read[i] / fan.at.p_bar } else { 0.0 })
+            gas.species
+                .iter()
+                .position(|s| s == f)
+                .map_or(0.0, |i| if fan.read[i].is_finite() { fan.read[i] / fan.at.p_bar } else { 0.0 })
         };
         let has = |f: &str| share(f) > TRACE;
         let coldest = zone.leaving.as_ref().map_or(zone.temperature.value, |l| l.value.min(zone.temperature.value));
@@ -71,13 +74,20 @@ pub fn cautions(line: &Line, assessed: &Assessed) -> alloc::vec::Vec<Caution> {
         add(Caution::ColdFlammable, flammable && coldest < COLD_FLAMMABLE_K);
         add(Caution::Carbonyl, share("CO") > 0.0 && coldest < CARBONYL_K && charge(&["Ni", "Fe", "Co", "NiO"]));
         add(Caution::Ammonia, has("NH3"));
-        add(Caution::Hydrocarbon, has("CH4") || gas.species.iter().any(|s| s.starts_with("C2H") || s.starts_with("C3H")));
+        add(
+            Caution::Hydrocarbon,
+            has("CH4") || gas.species.iter().any(|s| s.starts_with("C2H") || s.starts_with("C3H")),
+        );
         add(Caution::Sulfur, ["H2S", "SO2", "SO3", "COS", "S2"].iter().any(|f| share(f) > 0.0));
         add(Caution::Chlorine, ["HCl", "Cl2"].iter().any(|f| share(f) > 0.0));
         add(Caution::Vacuum, zone.pressure.value < VACUUM_BAR);
         add(Caution::Asphyxiant, share("N2") > 0.9 || share("Ar") > 0.5 || share("CO2") > 0.1);
         let powder = ["Ni", "Fe", "Co", "Cu", "W", "Mo", "NiO", "Fe2O3", "Fe3O4", "MoO3", "WO3", "CoO", "Co3O4", "CuO"];
-        add(Caution::Pyrophoric, flammable && line.charge.iter().any(|m| powder[6..].contains(&m.substance.as_str())) || (charge(&["Ni"]) && charge(&["Al2O3"])));
+        add(
+            Caution::Pyrophoric,
+            flammable && line.charge.iter().any(|m| powder[6..].contains(&m.substance.as_str()))
+                || (charge(&["Ni"]) && charge(&["Al2O3"])),
+        );
     }
     add(Caution::Sulfur, named("CaS") || named("SO2") || named("SO3") || named("H2S"));
     add(Caution::Lime, named("CaO") || charge(&["CaO", "CaCO3"]));

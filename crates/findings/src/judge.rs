@@ -415,14 +415,16 @@ impl Case<'_> {
         let zone = self.zone;
         let plain = Place { t_k, why: Why::Zone, u_t: zone.temperature.u, u_rate: 0.0, u_acts: 0.0 };
         let Some(leaving) = zone.leaving.as_ref() else { return (plain, false) };
-        let (mut cold, mut hot) = (zone.temperature.value.min(leaving.value), zone.temperature.value.max(leaving.value));
+        let (mut cold, mut hot) =
+            (zone.temperature.value.min(leaving.value), zone.temperature.value.max(leaving.value));
         let mut cut = false;
         if let Some((low, high)) = reaction.range_k() {
             let (from, to) = (low - leeway_substances::MARGIN_BELOW_K, high + leeway_substances::MARGIN_ABOVE_K);
             cut = cold < from || hot > to;
             (cold, hot) = (cold.max(from).min(hot.min(to)), hot.min(to));
         }
-        let u_at = |t: f64| if (t - leaving.value).abs() < 1e-9 && leaving.u > 0.0 { leaving.u } else { zone.temperature.u };
+        let u_at =
+            |t: f64| if (t - leaving.value).abs() < 1e-9 && leaving.u > 0.0 { leaving.u } else { zone.temperature.u };
         let acts = self.change.acts_above.as_ref();
         if acts.is_some_and(|a| a.temperature.value >= hot) {
             return (Place { t_k: hot, why: Why::TooCold, u_t: u_at(hot), u_rate: 0.0, u_acts: 0.0 }, cut);
@@ -563,7 +565,9 @@ impl Case<'_> {
         let mut cubic: Vec<(f64, f64)> = Vec::new();
         let at_temperature = |dt: f64, state: &State| self.dg_kj(reaction, t + dt, bound.ln_q(reaction, state));
         let thermal = fan.branches.iter().find(|b| b.moved == Moved::Temperature);
-        for (source, u) in [(Source::Temperature, place.u_t), (Source::Rate, place.u_rate), (Source::ActsAbove, place.u_acts)] {
+        for (source, u) in
+            [(Source::Temperature, place.u_t), (Source::Rate, place.u_rate), (Source::ActsAbove, place.u_acts)]
+        {
             if u > 0.0 {
                 // The gas moves with the temperature where it is shifted, or a cell reads it in place.
                 let by = |i: usize| {
@@ -651,7 +655,9 @@ impl Case<'_> {
             let (cold, hot) = (from.min(to), from.max(to));
             let low = self.acts_above_k().map_or(cold, |a| a.max(cold));
             let mut marks = alloc::vec![low.min(hot), hot];
-            marks.extend(reaction.turning(self.ground.book, outcome.ln_q).iter().map(|c| c.at).filter(|t| *t > low && *t < hot));
+            marks.extend(
+                reaction.turning(self.ground.book, outcome.ln_q).iter().map(|c| c.at).filter(|t| *t > low && *t < hot),
+            );
             marks.sort_by(f64::total_cmp);
             let off = marks
                 .windows(2)

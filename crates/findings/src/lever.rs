@@ -138,7 +138,10 @@ pub fn sweeps(ground: &Ground, gas: &crate::fan::ZoneGas, at: &Situation) -> Vec
     let mut list: Vec<(What, Vec<f64>)> = Vec::new();
     let base = gas.read(ground.book, ground.shift, at).ok();
     let water = gas.species.iter().position(|s| s == "H2O");
-    let water_share = base.as_ref().zip(water).map_or(0.0, |((state, _), i)| if state[i].is_finite() { state[i] / at.p_bar } else { 0.0 });
+    let water_share = base
+        .as_ref()
+        .zip(water)
+        .map_or(0.0, |((state, _), i)| if state[i].is_finite() { state[i] / at.p_bar } else { 0.0 });
     for (i, input) in gas.intake.inputs.iter().enumerate() {
         let Some(lever) = &input.lever else { continue };
         if lever == "dew_point" {
@@ -215,24 +218,31 @@ pub fn levers(case: &Case, outcome: &Outcome, sweeps: &[Sweep]) -> Vec<Lever> {
         if !sweep.moves(case, outcome) {
             continue;
         }
-        let turning: Vec<f64> = sweep.crossings(case, outcome, &at, 0.0).iter().map(|c| unit.from_internal(c.at)).collect();
+        let turning: Vec<f64> =
+            sweep.crossings(case, outcome, &at, 0.0).iter().map(|c| unit.from_internal(c.at)).collect();
         let ends = (sweep.values[0], sweep.values[sweep.values.len() - 1]);
         list.push(make(sweep.what.clone(), unit, reading, u, turning, ends, outcome));
     }
-    let rank = |l: &Lever| match l.what {
-        What::DewPoint(_) => 0,
-        What::Gas(..) => 2,
-        _ => 3,
-    };
-    list.sort_by_key(rank);
     let reaction = case.reaction(&outcome.bound);
+    let holds = |f: &str| reaction.used.iter().any(|u| u.formula == f);
+    // A gas of the equation moves it itself; another only by making room.
+    let rank = |l: &Lever| match &l.what {
+        What::DewPoint(_) if holds("H2O") => 0,
+        What::Temperature => 1,
+        What::Gas(_, f) if holds(f) => 2,
+        What::Pressure => 3,
+        What::Activity(..) => 4,
+        _ => 5,
+    };
     let unit = case.zone.temperature.unit;
     let turning = reaction.turning(case.ground.book, outcome.ln_q).iter().map(|c| unit.from_internal(c.at)).collect();
-    let reading = if outcome.place.why == Why::Zone { case.zone.temperature.given } else { unit.from_internal(outcome.place.t_k) };
+    let reading = if outcome.place.why == Why::Zone {
+        case.zone.temperature.given
+    } else {
+        unit.from_internal(outcome.place.t_k)
+    };
     let range = reaction.range_k().unwrap_or((outcome.place.t_k, outcome.place.t_k));
-    let temperature = make(What::Temperature, unit, reading, outcome.place.u_t, turning, range, outcome);
-    let after_dew = usize::from(list.first().is_some_and(|l| matches!(l.what, What::DewPoint(_))));
-    list.insert(after_dew, temperature);
+    list.push(make(What::Temperature, unit, reading, outcome.place.u_t, turning, range, outcome));
     for (n, (i, taken)) in outcome.bound.activities.iter().enumerate() {
         if taken.from == crate::activity::From::Pure {
             continue;
@@ -243,10 +253,17 @@ pub fn levers(case: &Case, outcome: &Outcome, sweeps: &[Sweep]) -> Vec<Lever> {
         let turn = exp(ln_a - outcome.read.dg_kj / (nu * rt));
         let turning = if turn <= 1.0 { alloc::vec![turn] } else { Vec::new() };
         let u = taken.value * taken.u_ln();
-        list.push(make(What::Activity(n, taken.formula.clone()), Unit::Fraction, taken.value, u, turning, (0.0, 1.0), outcome));
+        list.push(make(
+            What::Activity(n, taken.formula.clone()),
+            Unit::Fraction,
+            taken.value,
+            u,
+            turning,
+            (0.0, 1.0),
+            outcome,
+        ));
     }
-    // Stable: levers that turn before those that do not, in their order otherwise.
-    list.sort_by_key(|l| l.turning.is_empty());
+    list.sort_by_key(|l| (l.turning.is_empty(), rank(l)));
     list
 }
 

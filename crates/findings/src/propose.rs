@@ -105,13 +105,19 @@ pub fn propose(book: &Book, shift: &Shift, line: &Line) -> Vec<Proposal> {
         .substances
         .iter()
         .enumerate()
-        .filter(|(i, s)| s.records.iter().any(|r| r.class == Class::Condensed) && book.default_class(*i) == Class::Condensed)
+        .filter(|(i, s)| {
+            s.records.iter().any(|r| r.class == Class::Condensed) && book.default_class(*i) == Class::Condensed
+        })
         .map(|(_, s)| s.formula.text())
         .collect();
     let carbon = Element::from_symbol("C");
     let mut list: Vec<Proposal> = Vec::new();
     for start in &starts {
-        let own: BTreeSet<Element> = start.iter().filter_map(|f| book.find(f)).flat_map(|i| book.substances[i].formula.counts().keys().copied()).collect();
+        let own: BTreeSet<Element> = start
+            .iter()
+            .filter_map(|f| book.find(f))
+            .flat_map(|i| book.substances[i].formula.counts().keys().copied())
+            .collect();
         for (taken, given) in GASES {
             if start.len() > 1 && (taken.is_empty() || taken == ["N2"] || taken == ["CO"] || taken == ["CH4"]) {
                 continue;
@@ -119,8 +125,12 @@ pub fn propose(book: &Book, shift: &Shift, line: &Line) -> Vec<Proposal> {
             if !taken.iter().chain(given).all(|g| shown.contains(g)) {
                 continue;
             }
-            let brought: BTreeSet<Element> =
-                taken.iter().chain(given).filter_map(|g| Formula::parse(g).ok()).flat_map(|f| f.counts().keys().copied().collect::<Vec<_>>()).collect();
+            let brought: BTreeSet<Element> = taken
+                .iter()
+                .chain(given)
+                .filter_map(|g| Formula::parse(g).ok())
+                .flat_map(|f| f.counts().keys().copied().collect::<Vec<_>>())
+                .collect();
             for product in &products {
                 if start.contains(product) {
                     continue;
@@ -148,7 +158,10 @@ pub fn propose(book: &Book, shift: &Shift, line: &Line) -> Vec<Proposal> {
                 if watched.iter().any(|w| w.forms.iter().any(|(_, r)| r.same_as(compiled.written()))) {
                     continue;
                 }
-                if list.iter().any(|p| Compiled::from_equation(book, &p.equation, 1.0).is_ok_and(|c| c.written().same_as(compiled.written()))) {
+                if list.iter().any(|p| {
+                    Compiled::from_equation(book, &p.equation, 1.0)
+                        .is_ok_and(|c| c.written().same_as(compiled.written()))
+                }) {
                     continue;
                 }
                 let Some((nearest_zone, dg_kj, z)) = nearest(&ground, line, &gases, &compiled, &text) else { continue };

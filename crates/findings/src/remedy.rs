@@ -101,7 +101,15 @@ fn at_level(case: &Case, outcome: &Outcome, sweep: Option<&Sweep>, at: &Situatio
     }
 }
 
-fn along(case: &Case, outcome: &Outcome, sweep: Option<&Sweep>, what: &What, at: &Situation, from: f64, unit: Unit) -> Option<Remedy> {
+fn along(
+    case: &Case,
+    outcome: &Outcome,
+    sweep: Option<&Sweep>,
+    what: &What,
+    at: &Situation,
+    from: f64,
+    unit: Unit,
+) -> Option<Remedy> {
     let allowed = what.allowed();
     let reachable = |v: &f64| (*v > from && allowed.up) || (*v < from && allowed.down);
     let nearest = |list: Vec<f64>| {
@@ -138,7 +146,8 @@ fn faster(case: &Case, outcome: &Outcome) -> Option<Remedy> {
     let q = case.zone.rate.as_ref()?;
     let reaction = case.reaction(&outcome.bound);
     let level = case.ground.k * outcome.read.doubt.u_kj;
-    let beyond = at_level(case, outcome, None, &Situation { t_k: outcome.place.t_k, p_bar: 0.0, values: Vec::new() }, level);
+    let beyond =
+        at_level(case, outcome, None, &Situation { t_k: outcome.place.t_k, p_bar: 0.0, values: Vec::new() }, level);
     let hot = case.zone.temperature.value.max(case.zone.leaving.as_ref()?.value);
     let target = beyond.into_iter().filter(|t| *t > outcome.place.t_k && *t <= hot).min_by(f64::total_cmp)?;
     let turn = reaction

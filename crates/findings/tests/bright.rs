@@ -30,9 +30,18 @@ fn line(celsius: f64, frost: f64) -> Line {
             pressure: q(1.01325, Unit::Bar, 0.0),
             gas: GasReading {
                 basis: Some(Basis::Dry),
-                channels: vec![Channel { formula: "N2".into(), quantity: q(0.0001, Unit::Percent, 0.0), basis: None, upper_bound: false }],
+                channels: vec![Channel {
+                    formula: "N2".into(),
+                    quantity: q(0.0001, Unit::Percent, 0.0),
+                    basis: None,
+                    upper_bound: false,
+                }],
                 balance: Some("H2".into()),
-                dew_point: Some(DewPoint { quantity: q(frost, Unit::Celsius, 2.0), over: Some(Surface::Ice), pressure: None }),
+                dew_point: Some(DewPoint {
+                    quantity: q(frost, Unit::Celsius, 2.0),
+                    over: Some(Surface::Ice),
+                    pressure: None,
+                }),
                 cell: None,
             },
         }],

@@ -44,7 +44,9 @@ pub enum GasProblem {
         formula: String,
     },
     /// A name that is no formula.
-    #[error("found the gas \u{201c}{formula}\u{201d}, expected a formula such as H2, CO2 or N2, or \u{201c}air\u{201d} as the balance")]
+    #[error(
+        "found the gas \u{201c}{formula}\u{201d}, expected a formula such as H2, CO2 or N2, or \u{201c}air\u{201d} as the balance"
+    )]
     NotAFormula {
         /// The name.
         formula: String,
@@ -66,7 +68,9 @@ pub enum GasProblem {
         celsius: f64,
     },
     /// More water than pressure.
-    #[error("found a dew point of {celsius:.1} C, which is {water_bar:.3} bar of water in {pressure_bar:.3} bar of gas; expected less water than gas")]
+    #[error(
+        "found a dew point of {celsius:.1} C, which is {water_bar:.3} bar of water in {pressure_bar:.3} bar of gas; expected less water than gas"
+    )]
     AllWater {
         /// The dew point, C.
         celsius: f64,
@@ -161,7 +165,11 @@ impl Intake {
             cell_equilibrium: false,
             dew_pressure: None,
         };
-        if reading.channels.is_empty() && reading.balance.is_none() && reading.dew_point.is_none() && reading.cell.is_none() {
+        if reading.channels.is_empty()
+            && reading.balance.is_none()
+            && reading.dew_point.is_none()
+            && reading.cell.is_none()
+        {
             return Err(GasProblem::Empty);
         }
         let has = |f: &str| reading.channels.iter().any(|c| c.formula == f);
@@ -247,10 +255,20 @@ impl Intake {
                 role: Role::CellVoltage,
             });
             if let Some(t) = cell.temperature {
-                it.inputs.push(Input { label: "cell temperature".to_string(), lever: None, quantity: t, role: Role::CellTemperature });
+                it.inputs.push(Input {
+                    label: "cell temperature".to_string(),
+                    lever: None,
+                    quantity: t,
+                    role: Role::CellTemperature,
+                });
             }
             if let Some(r) = cell.reference_bar {
-                it.inputs.push(Input { label: "cell reference".to_string(), lever: None, quantity: r, role: Role::CellReference });
+                it.inputs.push(Input {
+                    label: "cell reference".to_string(),
+                    lever: None,
+                    quantity: r,
+                    role: Role::CellReference,
+                });
             }
             let holds = |s: &str, it: &Self| it.species.iter().any(|x| x == s);
             let (h2, co) = (holds("H2", &it), holds("CO", &it));
@@ -259,11 +277,14 @@ impl Intake {
                 if h2 && it.water.is_none() {
                     it.water = Some(it.add("H2O", false));
                     it.derived_water = true;
-                    it.notes.push("Water is from the cell voltage and the hydrogen, at the cell's temperature".to_string());
+                    it.notes
+                        .push("Water is from the cell voltage and the hydrogen, at the cell's temperature".to_string());
                 }
                 if co && !holds("CO2", &it) {
                     it.derived_dioxide = Some(it.add("CO2", false));
-                    it.notes.push("CO2 is from the cell voltage and the carbon monoxide, at the cell's temperature".to_string());
+                    it.notes.push(
+                        "CO2 is from the cell voltage and the carbon monoxide, at the cell's temperature".to_string(),
+                    );
                 }
                 if !it.derived_water && it.derived_dioxide.is_none() {
                     it.notes.push("The cell voltage is a second witness of the oxygen potential; the analysis is what counts here".to_string());
@@ -314,8 +335,7 @@ impl Intake {
         let find = |role: fn(&Role) -> bool| self.inputs.iter().position(|i| role(&i.role)).map(|i| values[i]);
         let cell_k = find(|r| matches!(r, Role::CellTemperature)).unwrap_or(t_k);
         let cell_oxygen_bar = find(|r| matches!(r, Role::CellVoltage)).map(|volt| {
-            let reference =
-                find(|r| matches!(r, Role::CellReference)).unwrap_or(AIR_OXYGEN * BAR_PER_ATM);
+            let reference = find(|r| matches!(r, Role::CellReference)).unwrap_or(AIR_OXYGEN * BAR_PER_ATM);
             reference * exp(-4.0 * FARADAY * volt / (GAS_CONSTANT * cell_k))
         });
         // Water first: dry shares need it.
@@ -414,7 +434,15 @@ impl Intake {
     }
 
     /// Water share from p(H2O)/p(H2) = sqrt(K p(O2)) at the cell; a dry hydrogen share closes on itself.
-    fn water_from_cell(&self, book: &Book, shift: &Shift, values: &[f64], cell_k: f64, oxygen_bar: f64, p_bar: f64) -> Result<f64, GasProblem> {
+    fn water_from_cell(
+        &self,
+        book: &Book,
+        shift: &Shift,
+        values: &[f64],
+        cell_k: f64,
+        oxygen_bar: f64,
+        p_bar: f64,
+    ) -> Result<f64, GasProblem> {
         let k = shift.k_hydrogen(book, cell_k).ok_or(GasProblem::Cell { kelvin: cell_k })?;
         let ratio = sqrt(k * oxygen_bar);
         let h2 = self.species.iter().position(|s| s == "H2");

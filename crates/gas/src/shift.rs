@@ -106,7 +106,9 @@ impl Shift {
             *p *= total / sum;
         }
         let how = match (burns, shifts) {
-            (true, true) => "oxygen burnt out with hydrogen or carbon monoxide, then CO, CO2, H2 and H2O at equilibrium",
+            (true, true) => {
+                "oxygen burnt out with hydrogen or carbon monoxide, then CO, CO2, H2 and H2O at equilibrium"
+            }
             (true, false) => "oxygen burnt out with hydrogen or carbon monoxide",
             _ => "CO, CO2, H2 and H2O at equilibrium",
         };

@@ -4,7 +4,7 @@
 //! gathered before it is refused, the first with the rest behind it.
 
 use crate::json::{Json, clip, line_of};
-use crate::model::{ActsAbove, Activity, Change, Line, Member, Note, Wish, Zone};
+use crate::model::{Activity, ActsAbove, Change, Line, Member, Note, Wish, Zone};
 use alloc::format;
 use alloc::string::{String, ToString};
 use alloc::vec::Vec;
@@ -46,7 +46,16 @@ pub struct FileError {
 
 fn error(code: &'static str, at: &str, place: String, found: String, expected: &str) -> FileError {
     let message = format!("found {found}, expected {expected}");
-    FileError { code, at: at.to_string(), place, message, found, expected: expected.to_string(), hints: Vec::new(), more: Vec::new() }
+    FileError {
+        code,
+        at: at.to_string(),
+        place,
+        message,
+        found,
+        expected: expected.to_string(),
+        hints: Vec::new(),
+        more: Vec::new(),
+    }
 }
 
 /// Bytes of a file as text: UTF-8, a byte order mark dropped with a note.
@@ -64,7 +73,10 @@ pub fn decode(bytes: &[u8]) -> Result<(String, Vec<Note>), FileError> {
     if bytes.is_empty() {
         return Err(error("file.empty", "", file(), "an empty file".to_string(), "a line file, which begins with {"));
     }
-    let utf16 = bytes.starts_with(&[0xff, 0xfe]) || bytes.starts_with(&[0xfe, 0xff]) || bytes.starts_with(b"{\0") || bytes.starts_with(b"\0{");
+    let utf16 = bytes.starts_with(&[0xff, 0xfe])
+        || bytes.starts_with(&[0xfe, 0xff])
+        || bytes.starts_with(b"{\0")
+        || bytes.starts_with(b"\0{");
     if utf16 {
         let mut e = error("file.utf16", "", file(), "text in UTF-16".to_string(), "text in UTF-8");
         e.hints.push("Save it again as UTF-8".to_string());
@@ -73,7 +85,10 @@ pub fn decode(bytes: &[u8]) -> Result<(String, Vec<Note>), FileError> {
     let mut notes = Vec::new();
     let body = bytes.strip_prefix(&[0xef, 0xbb, 0xbf]).unwrap_or(bytes);
     if body.len() < bytes.len() {
-        notes.push(Note { at: String::new(), text: "A byte order mark at the head of the file is left out".to_string() });
+        notes.push(Note {
+            at: String::new(),
+            text: "A byte order mark at the head of the file is left out".to_string(),
+        });
     }
     if body.contains(&0) {
         return Err(error("file.binary", "", file(), "a binary file".to_string(), "a line file, which is text"));
@@ -97,7 +112,13 @@ pub fn decode(bytes: &[u8]) -> Result<(String, Vec<Note>), FileError> {
 /// a key twice.
 pub(crate) fn tree(text: &str) -> Result<Json, FileError> {
     if text.len() > LARGEST {
-        return Err(error("file.large", "", "the file".to_string(), format!("{} bytes", text.len()), "a line file of at most 4 000 000 bytes"));
+        return Err(error(
+            "file.large",
+            "",
+            "the file".to_string(),
+            format!("{} bytes", text.len()),
+            "a line file of at most 4 000 000 bytes",
+        ));
     }
     serde_json::from_str::<Json>(text).map_err(|e| {
         let (line, column) = (e.line(), e.column());
@@ -111,8 +132,18 @@ pub(crate) fn tree(text: &str) -> Result<Json, FileError> {
         } else if said.contains("stands twice") {
             (format!("{said} in line {line}"), "each key once in its object")
         } else {
-            let near: String = text.lines().nth(line.saturating_sub(1)).unwrap_or("").chars().skip(column.saturating_sub(8)).take(16).collect();
-            (format!("\u{201c}{}\u{201d} in line {line}, column {column} ({said})", clip(near.trim())), "JSON: numbers without quotes, a point for decimals, commas between members")
+            let near: String = text
+                .lines()
+                .nth(line.saturating_sub(1))
+                .unwrap_or("")
+                .chars()
+                .skip(column.saturating_sub(8))
+                .take(16)
+                .collect();
+            (
+                format!("\u{201c}{}\u{201d} in line {line}, column {column} ({said})", clip(near.trim())),
+                "JSON: numbers without quotes, a point for decimals, commas between members",
+            )
         };
         error("file.json", "", place, found, expected)
     })
@@ -135,7 +166,8 @@ pub fn read(text: &str) -> Result<Line, FileError> {
     let line = reader.line();
     let mut problems = reader.problems;
     if problems.is_empty() {
-        return line.ok_or_else(|| error("file.line", "", "the file".to_string(), "no line".to_string(), "a line file"));
+        return line
+            .ok_or_else(|| error("file.line", "", "the file".to_string(), "no line".to_string(), "a line file"));
     }
     let mut first = problems.remove(0);
     first.more = problems;
@@ -143,8 +175,19 @@ pub fn read(text: &str) -> Result<Line, FileError> {
 }
 
 const TOP: [&str; 13] = [
-    "leeway", "name", "invented", "about", "charge_name", "readings_note", "coverage_factor", "pressure", "charge", "zones",
-    "changes", "variants", "view",
+    "leeway",
+    "name",
+    "invented",
+    "about",
+    "charge_name",
+    "readings_note",
+    "coverage_factor",
+    "pressure",
+    "charge",
+    "zones",
+    "changes",
+    "variants",
+    "view",
 ];
 const QUANTITY: [&str; 6] = ["value", "unit", "tolerance", "tolerance_kind", "instrument", "source"];
 
@@ -152,7 +195,9 @@ impl Reader<'_> {
     /// The place of a path in words: `zone 3, Heat 3; line 41`.
     fn place(&self, at: &str) -> String {
         let mut words = Vec::new();
-        for (key, noun) in [("zones", "zone"), ("changes", "change"), ("charge", "charge member"), ("variants", "variant")] {
+        for (key, noun) in
+            [("zones", "zone"), ("changes", "change"), ("charge", "charge member"), ("variants", "variant")]
+        {
             let Some(rest) = at.strip_prefix(key).and_then(|r| r.strip_prefix('[')) else { continue };
             let Some(i) = rest.split(']').next().and_then(|i| i.parse::<usize>().ok()) else { continue };
             let mut word = format!("{noun} {}", i + 1);
@@ -213,7 +258,10 @@ impl Reader<'_> {
             let path = if at.is_empty() { key.clone() } else { format!("{at}.{key}") };
             let near = known.iter().min_by_key(|k| distance(k, key)).filter(|k| distance(k, key) <= 2);
             let hint = near.map_or_else(String::new, |k| format!(" Is \u{201c}{k}\u{201d} meant?"));
-            self.notes.push(Note { at: path, text: format!("The field \u{201c}{}\u{201d} is not known: kept, not used.{hint}", clip(key)) });
+            self.notes.push(Note {
+                at: path,
+                text: format!("The field \u{201c}{}\u{201d} is not known: kept, not used.{hint}", clip(key)),
+            });
         }
     }
 
@@ -313,7 +361,12 @@ impl Reader<'_> {
             Some(Json::Text(t)) if t == "limits" => Spread::Limits,
             Some(Json::Text(t)) if t == "standard" => Spread::Standard,
             Some(other) => {
-                self.wrong("line.tolerance", &kind_at, other.describe(), "\u{201c}limits\u{201d} or \u{201c}standard\u{201d}");
+                self.wrong(
+                    "line.tolerance",
+                    &kind_at,
+                    other.describe(),
+                    "\u{201c}limits\u{201d} or \u{201c}standard\u{201d}",
+                );
                 Spread::Limits
             }
         };
@@ -321,7 +374,12 @@ impl Reader<'_> {
             let at = format!("{at}.instrument");
             let Some(name) = self.text_of(Some(json), &at, true) else { return Some(quantity) };
             if quantity.unit.kind() != Kind::Temperature {
-                self.wrong("line.instrument", &at, format!("\u{201c}{}\u{201d}", clip(&name)), "an instrument for a temperature only");
+                self.wrong(
+                    "line.instrument",
+                    &at,
+                    format!("\u{201c}{}\u{201d}", clip(&name)),
+                    "an instrument for a temperature only",
+                );
                 return Some(quantity);
             }
             return match instrument::limits_k(&name, quantity.value) {
@@ -341,12 +399,22 @@ impl Reader<'_> {
                 Err(e) => {
                     let text = e.to_string();
                     let (found, expected) = text.split_once(", expected ").unwrap_or((&text, ""));
-                    self.wrong("line.tolerance", &format!("{at}.tolerance"), found.trim_start_matches("found ").to_string(), expected);
+                    self.wrong(
+                        "line.tolerance",
+                        &format!("{at}.tolerance"),
+                        found.trim_start_matches("found ").to_string(),
+                        expected,
+                    );
                     None
                 }
             },
             Some(other) => {
-                self.wrong("line.tolerance", &format!("{at}.tolerance"), other.describe(), "a number in the quantity's own unit");
+                self.wrong(
+                    "line.tolerance",
+                    &format!("{at}.tolerance"),
+                    other.describe(),
+                    "a number in the quantity's own unit",
+                );
                 None
             }
         }
@@ -360,14 +428,23 @@ impl Reader<'_> {
             Some(Json::Number(n)) if *n == VERSION => {}
             Some(Json::Number(n)) if *n > VERSION => self.notes.push(Note {
                 at: "leeway".to_string(),
-                text: format!("The file is version {n}; this program reads version 1. What it does not know is kept and not used."),
+                text: format!(
+                    "The file is version {n}; this program reads version 1. What it does not know is kept and not used."
+                ),
             }),
             Some(other) => self.wrong("line.version", "leeway", other.describe(), "1, the version of the form"),
-            None => self.wrong("line.version", "leeway", "no version".to_string(), "\u{201c}leeway\u{201d}: 1, which marks a line file"),
+            None => self.wrong(
+                "line.version",
+                "leeway",
+                "no version".to_string(),
+                "\u{201c}leeway\u{201d}: 1, which marks a line file",
+            ),
         }
         let name = self.text_of(root.get("name"), "name", false).unwrap_or_else(|| "Line without a name".to_string());
         let invented = self.flag(root.get("invented"), "invented");
-        let coverage_factor = self.number(root.get("coverage_factor"), "coverage_factor", 1.0, 4.0, "a number from 1 to 4").unwrap_or(2.0);
+        let coverage_factor = self
+            .number(root.get("coverage_factor"), "coverage_factor", 1.0, 4.0, "a number from 1 to 4")
+            .unwrap_or(2.0);
         for key in ["about", "charge_name", "readings_note"] {
             self.text_of(root.get(key), key, false);
         }
@@ -385,7 +462,12 @@ impl Reader<'_> {
         if q.value > 0.0 {
             return Some(q);
         }
-        self.wrong("line.value", &format!("{at}.value"), format!("{} {}", q.given, q.unit.symbol()), "an absolute pressure above 0");
+        self.wrong(
+            "line.value",
+            &format!("{at}.value"),
+            format!("{} {}", q.given, q.unit.symbol()),
+            "an absolute pressure above 0",
+        );
         None
     }
 
@@ -395,8 +477,14 @@ impl Reader<'_> {
         for (i, member) in self.list(json, "charge").iter().enumerate() {
             let at = format!("charge[{i}]");
             let Some(members) = self.object(member, &at) else { continue };
-            self.known(members, &["substance", "share_wt", "activity", "activity_coefficient", "doubt_factor", "source"], &at);
-            let Some(substance) = self.text_of(member.get("substance"), &format!("{at}.substance"), true) else { continue };
+            self.known(
+                members,
+                &["substance", "share_wt", "activity", "activity_coefficient", "doubt_factor", "source"],
+                &at,
+            );
+            let Some(substance) = self.text_of(member.get("substance"), &format!("{at}.substance"), true) else {
+                continue;
+            };
             let share_at = format!("{at}.share_wt");
             let share_wt = match member.get("share_wt") {
                 Some(Json::Number(n)) => match Quantity::new(*n, Unit::Percent) {
@@ -413,7 +501,12 @@ impl Reader<'_> {
             charge.push(Member { substance, share_wt, activity });
         }
         if sum > LARGEST_CHARGE {
-            self.wrong("line.charge", "charge", format!("mass shares that add up to {:.2} %", sum * 100.0), "at most 100.5 %");
+            self.wrong(
+                "line.charge",
+                "charge",
+                format!("mass shares that add up to {:.2} %", sum * 100.0),
+                "at most 100.5 %",
+            );
         }
         charge
     }
@@ -423,10 +516,20 @@ impl Reader<'_> {
         let direct = if member { "activity" } else { "value" };
         let positive = "a number above 0 and at most 1000";
         let value = self.number(json.get(direct), &format!("{at}.{direct}"), f64::MIN_POSITIVE, 1000.0, positive);
-        let coefficient =
-            self.number(json.get("activity_coefficient"), &format!("{at}.activity_coefficient"), f64::MIN_POSITIVE, 1000.0, positive);
-        let doubt_factor =
-            self.number(json.get("doubt_factor"), &format!("{at}.doubt_factor"), 1.0, 1e6, "a factor of at least 1, by which the activity may be off up and down");
+        let coefficient = self.number(
+            json.get("activity_coefficient"),
+            &format!("{at}.activity_coefficient"),
+            f64::MIN_POSITIVE,
+            1000.0,
+            positive,
+        );
+        let doubt_factor = self.number(
+            json.get("doubt_factor"),
+            &format!("{at}.doubt_factor"),
+            1.0,
+            1e6,
+            "a factor of at least 1, by which the activity may be off up and down",
+        );
         let source = self.text_of(json.get("source"), &format!("{at}.source"), false);
         match (value, coefficient) {
             (Some(_), Some(_)) => {
@@ -435,7 +538,9 @@ impl Reader<'_> {
             }
             (Some(value), None) => Some(Activity { value, is_coefficient: false, doubt_factor, source }),
             (None, Some(value)) => Some(Activity { value, is_coefficient: true, doubt_factor, source }),
-            (None, None) => doubt_factor.map(|f| Activity { value: 1.0, is_coefficient: true, doubt_factor: Some(f), source }),
+            (None, None) => {
+                doubt_factor.map(|f| Activity { value: 1.0, is_coefficient: true, doubt_factor: Some(f), source })
+            }
         }
     }
 
@@ -451,7 +556,12 @@ impl Reader<'_> {
             if let Some(name) = &name
                 && zones.iter().any(|z| z.name == *name)
             {
-                self.wrong("line.name", &format!("{at}.name"), format!("\u{201c}{}\u{201d} a second time", clip(name)), "a name of its own for each zone");
+                self.wrong(
+                    "line.name",
+                    &format!("{at}.name"),
+                    format!("\u{201c}{}\u{201d} a second time", clip(name)),
+                    "a name of its own for each zone",
+                );
             }
             let temperature_at = format!("{at}.temperature");
             if zone.get("temperature").is_none() {
@@ -471,7 +581,10 @@ impl Reader<'_> {
             }
         }
         if without_pressure {
-            self.notes.push(Note { at: "pressure".to_string(), text: "No pressure is given: 1.01325 bar is taken".to_string() });
+            self.notes.push(Note {
+                at: "pressure".to_string(),
+                text: "No pressure is given: 1.01325 bar is taken".to_string(),
+            });
         }
         zones
     }
@@ -498,13 +611,22 @@ impl Reader<'_> {
             let at = format!("{at}.analysis");
             for (formula, channel) in self.object(analysis, &at).unwrap_or(&[]) {
                 let at = format!("{at}.{formula}");
-                let Some(quantity) = self.quantity(Some(channel), &at, &[Kind::Fraction, Kind::Pressure], &["basis", "bound"]) else { continue };
+                let Some(quantity) =
+                    self.quantity(Some(channel), &at, &[Kind::Fraction, Kind::Pressure], &["basis", "bound"])
+                else {
+                    continue;
+                };
                 let basis = self.basis(channel.get("basis"), &format!("{at}.basis"));
                 let upper_bound = match channel.get("bound") {
                     None => false,
                     Some(Json::Text(t)) if t == "upper" => true,
                     Some(other) => {
-                        self.wrong("line.bound", &format!("{at}.bound"), other.describe(), "\u{201c}upper\u{201d}, for a reading at its detection limit");
+                        self.wrong(
+                            "line.bound",
+                            &format!("{at}.bound"),
+                            other.describe(),
+                            "\u{201c}upper\u{201d}, for a reading at its detection limit",
+                        );
                         false
                     }
                 };
@@ -518,7 +640,12 @@ impl Reader<'_> {
                 Some(Json::Text(t)) if t == "ice" => Some(Surface::Ice),
                 Some(Json::Text(t)) if t == "water" => Some(Surface::Water),
                 Some(other) => {
-                    self.wrong("line.over", &format!("{at}.over"), other.describe(), "\u{201c}ice\u{201d} or \u{201c}water\u{201d}");
+                    self.wrong(
+                        "line.over",
+                        &format!("{at}.over"),
+                        other.describe(),
+                        "\u{201c}ice\u{201d} or \u{201c}water\u{201d}",
+                    );
                     None
                 }
             };
@@ -529,7 +656,8 @@ impl Reader<'_> {
         }
         if let Some(cell) = json.get("oxygen_cell") {
             let at = format!("{at}.oxygen_cell");
-            let temperature = self.quantity(cell.get("temperature"), &format!("{at}.temperature"), &[Kind::Temperature], &[]);
+            let temperature =
+                self.quantity(cell.get("temperature"), &format!("{at}.temperature"), &[Kind::Temperature], &[]);
             let reference_bar = self.pressure(cell.get("reference"), &format!("{at}.reference"));
             if let Some(voltage) = self.quantity(Some(cell), &at, &[Kind::Voltage], &["temperature", "reference"]) {
                 gas.cell = Some(Cell { voltage, temperature, reference_bar });
@@ -543,23 +671,42 @@ impl Reader<'_> {
         for (i, change) in self.list(json, "changes").iter().enumerate() {
             let at = format!("changes[{i}]");
             let Some(members) = self.object(change, &at) else { continue };
-            self.known(members, &["name", "equation", "wish", "zones", "activities", "acts_above", "allowed", "tolerated", "about"], &at);
+            self.known(
+                members,
+                &["name", "equation", "wish", "zones", "activities", "acts_above", "allowed", "tolerated", "about"],
+                &at,
+            );
             let name = self.text_of(change.get("name"), &format!("{at}.name"), true);
             if let Some(name) = &name
                 && changes.iter().any(|c| c.name == *name)
             {
-                self.wrong("line.name", &format!("{at}.name"), format!("\u{201c}{}\u{201d} a second time", clip(name)), "a name of its own for each change");
+                self.wrong(
+                    "line.name",
+                    &format!("{at}.name"),
+                    format!("\u{201c}{}\u{201d} a second time", clip(name)),
+                    "a name of its own for each change",
+                );
             }
             let equation = self.text_of(change.get("equation"), &format!("{at}.equation"), true);
             let wish = match change.get("wish") {
                 Some(Json::Text(t)) if t == "want" => Some(Wish::Want),
                 Some(Json::Text(t)) if t == "avoid" => Some(Wish::Avoid),
                 Some(other) => {
-                    self.wrong("line.wish", &format!("{at}.wish"), other.describe(), "\u{201c}want\u{201d} or \u{201c}avoid\u{201d}");
+                    self.wrong(
+                        "line.wish",
+                        &format!("{at}.wish"),
+                        other.describe(),
+                        "\u{201c}want\u{201d} or \u{201c}avoid\u{201d}",
+                    );
                     None
                 }
                 None => {
-                    self.wrong("line.missing", &format!("{at}.wish"), "no wish".to_string(), "\u{201c}want\u{201d} or \u{201c}avoid\u{201d}");
+                    self.wrong(
+                        "line.missing",
+                        &format!("{at}.wish"),
+                        "no wish".to_string(),
+                        "\u{201c}want\u{201d} or \u{201c}avoid\u{201d}",
+                    );
                     None
                 }
             };
@@ -583,13 +730,20 @@ impl Reader<'_> {
                 for (formula, value) in self.object(given, &at).unwrap_or(&[]) {
                     let at = format!("{at}.{formula}");
                     let taken = match value {
-                        Json::Number(n) if *n > 0.0 && n.is_finite() => Some(Activity { value: *n, is_coefficient: false, doubt_factor: None, source: None }),
+                        Json::Number(n) if *n > 0.0 && n.is_finite() => {
+                            Some(Activity { value: *n, is_coefficient: false, doubt_factor: None, source: None })
+                        }
                         Json::Object(members) => {
                             self.known(members, &["value", "activity_coefficient", "doubt_factor", "source"], &at);
                             self.activity(value, &at, false)
                         }
                         other => {
-                            self.wrong("line.activity", &at, other.describe(), "an activity above 0, or an object with its value");
+                            self.wrong(
+                                "line.activity",
+                                &at,
+                                other.describe(),
+                                "an activity above 0, or an object with its value",
+                            );
                             None
                         }
                     };
@@ -597,16 +751,30 @@ impl Reader<'_> {
                 }
             }
             let acts_at = format!("{at}.acts_above");
-            let acts_above = self
-                .quantity(change.get("acts_above"), &acts_at, &[Kind::Temperature], &[])
-                .map(|temperature| ActsAbove {
-                    temperature,
-                    source: change.get("acts_above").and_then(|a| a.get("source")).and_then(Json::text).map(ToString::to_string),
+            let acts_above =
+                self.quantity(change.get("acts_above"), &acts_at, &[Kind::Temperature], &[]).map(|temperature| {
+                    ActsAbove {
+                        temperature,
+                        source: change
+                            .get("acts_above")
+                            .and_then(|a| a.get("source"))
+                            .and_then(Json::text)
+                            .map(ToString::to_string),
+                    }
                 });
             let allowed = self.quantity(change.get("allowed"), &format!("{at}.allowed"), &[Kind::Time], &[]);
             let tolerated = self.flag(change.get("tolerated"), &format!("{at}.tolerated"));
             if let (Some(name), Some(equation), Some(wish)) = (name, equation, wish) {
-                changes.push(Change { name, equation, wish, zones: in_zones, activities, acts_above, allowed, tolerated });
+                changes.push(Change {
+                    name,
+                    equation,
+                    wish,
+                    zones: in_zones,
+                    activities,
+                    acts_above,
+                    allowed,
+                    tolerated,
+                });
             }
         }
         changes

@@ -41,7 +41,11 @@ pub fn with_variant(text: &str, name: &str) -> Result<String, FileError> {
     let list = variants_of(&root);
     let Some(index) = list.iter().position(|v| v.get("name").and_then(Json::text) == Some(name)) else {
         let names: Vec<&str> = list.iter().filter_map(|v| v.get("name").and_then(Json::text)).collect();
-        let expected = if names.is_empty() { "no variant: the line has none".to_string() } else { format!("one of: {}", names.join("; ")) };
+        let expected = if names.is_empty() {
+            "no variant: the line has none".to_string()
+        } else {
+            format!("one of: {}", names.join("; "))
+        };
         return Err(fail("variants", format!("variant \u{201c}{name}\u{201d}"), &expected));
     };
     let steps = match list[index].get("patch") {
@@ -49,7 +53,8 @@ pub fn with_variant(text: &str, name: &str) -> Result<String, FileError> {
         _ => Vec::new(),
     };
     for (i, step) in steps.iter().enumerate() {
-        apply(&mut root, step).map_err(|(found, expected)| fail(&format!("variants[{index}].patch[{i}]"), found, expected))?;
+        apply(&mut root, step)
+            .map_err(|(found, expected)| fail(&format!("variants[{index}].patch[{i}]"), found, expected))?;
     }
     serde_json::to_string_pretty(&root).map_err(|e| fail("variants", e.to_string(), "a line that can be written"))
 }
@@ -68,7 +73,10 @@ fn fail(at: &str, found: String, expected: &str) -> FileError {
 }
 
 fn apply(root: &mut Json, step: &Json) -> Result<(), (String, &'static str)> {
-    let path = step.get("path").and_then(Json::text).ok_or(("no path".to_string(), "a path such as /zones/0/temperature/value"))?;
+    let path = step
+        .get("path")
+        .and_then(Json::text)
+        .ok_or(("no path".to_string(), "a path such as /zones/0/temperature/value"))?;
     let op = step.get("op").and_then(Json::text).unwrap_or("");
     let keys: Vec<String> = path.split('/').skip(1).map(|k| k.replace("~1", "/").replace("~0", "~")).collect();
     let Some((last, parents)) = keys.split_last() else {

@@ -54,25 +54,95 @@ const LONGEST: usize = 80;
 
 /// Spellings of units beside their symbols; compared without case, spaces, dots and brackets.
 const SPELLINGS: [(&str, Unit); 76] = [
-    ("°c", Unit::Celsius), ("ºc", Unit::Celsius), ("degc", Unit::Celsius), ("deg c", Unit::Celsius), ("celsius", Unit::Celsius), ("℃", Unit::Celsius), ("grad", Unit::Celsius),
-    ("°f", Unit::Fahrenheit), ("ºf", Unit::Fahrenheit), ("degf", Unit::Fahrenheit), ("fahrenheit", Unit::Fahrenheit), ("℉", Unit::Fahrenheit),
-    ("kelvin", Unit::Kelvin), ("°k", Unit::Kelvin),
-    ("bara", Unit::Bar), ("barabs", Unit::Bar), ("mbara", Unit::Millibar), ("mbarabs", Unit::Millibar), ("hpa", Unit::Millibar), ("kpaa", Unit::Kilopascal),
-    ("mmhg", Unit::Torr), ("psia", Unit::Psi), ("atma", Unit::Atmosphere),
-    ("vol%", Unit::Percent), ("vol-%", Unit::Percent), ("%vol", Unit::Percent), ("v%", Unit::Percent), ("wt%", Unit::Percent), ("wt-%", Unit::Percent), ("%wt", Unit::Percent), ("mass%", Unit::Percent), ("mol%", Unit::Percent), ("percent", Unit::Percent), ("pct", Unit::Percent),
-    ("ppmv", Unit::Ppm), ("volppm", Unit::Ppm), ("vpm", Unit::Ppm), ("ppbv", Unit::Ppb), ("volppb", Unit::Ppb), ("1", Unit::Fraction), ("mol/mol", Unit::Fraction),
-    ("volt", Unit::Volt), ("millivolt", Unit::Millivolt),
-    ("k/s", Unit::KelvinPerSecond), ("c/s", Unit::KelvinPerSecond), ("°c/s", Unit::KelvinPerSecond), ("degc/s", Unit::KelvinPerSecond), ("k/sec", Unit::KelvinPerSecond),
-    ("k/min", Unit::KelvinPerMinute), ("c/min", Unit::KelvinPerMinute), ("°c/min", Unit::KelvinPerMinute), ("degc/min", Unit::KelvinPerMinute), ("k/m", Unit::KelvinPerMinute),
-    ("k/h", Unit::KelvinPerHour), ("c/h", Unit::KelvinPerHour), ("°c/h", Unit::KelvinPerHour), ("degc/h", Unit::KelvinPerHour), ("k/hr", Unit::KelvinPerHour), ("k/hour", Unit::KelvinPerHour),
-    ("sec", Unit::Second), ("secs", Unit::Second), ("second", Unit::Second), ("seconds", Unit::Second),
-    ("mins", Unit::Minute), ("minute", Unit::Minute), ("minutes", Unit::Minute), ("hr", Unit::Hour), ("hrs", Unit::Hour), ("hour", Unit::Hour), ("hours", Unit::Hour), ("stunden", Unit::Hour),
-    ("frac", Unit::Fraction), ("torr", Unit::Torr), ("mm hg", Unit::Torr), ("pascal", Unit::Pascal), ("atm", Unit::Atmosphere),
+    ("°c", Unit::Celsius),
+    ("ºc", Unit::Celsius),
+    ("degc", Unit::Celsius),
+    ("deg c", Unit::Celsius),
+    ("celsius", Unit::Celsius),
+    ("℃", Unit::Celsius),
+    ("grad", Unit::Celsius),
+    ("°f", Unit::Fahrenheit),
+    ("ºf", Unit::Fahrenheit),
+    ("degf", Unit::Fahrenheit),
+    ("fahrenheit", Unit::Fahrenheit),
+    ("℉", Unit::Fahrenheit),
+    ("kelvin", Unit::Kelvin),
+    ("°k", Unit::Kelvin),
+    ("bara", Unit::Bar),
+    ("barabs", Unit::Bar),
+    ("mbara", Unit::Millibar),
+    ("mbarabs", Unit::Millibar),
+    ("hpa", Unit::Millibar),
+    ("kpaa", Unit::Kilopascal),
+    ("mmhg", Unit::Torr),
+    ("psia", Unit::Psi),
+    ("atma", Unit::Atmosphere),
+    ("vol%", Unit::Percent),
+    ("vol-%", Unit::Percent),
+    ("%vol", Unit::Percent),
+    ("v%", Unit::Percent),
+    ("wt%", Unit::Percent),
+    ("wt-%", Unit::Percent),
+    ("%wt", Unit::Percent),
+    ("mass%", Unit::Percent),
+    ("mol%", Unit::Percent),
+    ("percent", Unit::Percent),
+    ("pct", Unit::Percent),
+    ("ppmv", Unit::Ppm),
+    ("volppm", Unit::Ppm),
+    ("vpm", Unit::Ppm),
+    ("ppbv", Unit::Ppb),
+    ("volppb", Unit::Ppb),
+    ("1", Unit::Fraction),
+    ("mol/mol", Unit::Fraction),
+    ("volt", Unit::Volt),
+    ("millivolt", Unit::Millivolt),
+    ("k/s", Unit::KelvinPerSecond),
+    ("c/s", Unit::KelvinPerSecond),
+    ("°c/s", Unit::KelvinPerSecond),
+    ("degc/s", Unit::KelvinPerSecond),
+    ("k/sec", Unit::KelvinPerSecond),
+    ("k/min", Unit::KelvinPerMinute),
+    ("c/min", Unit::KelvinPerMinute),
+    ("°c/min", Unit::KelvinPerMinute),
+    ("degc/min", Unit::KelvinPerMinute),
+    ("k/m", Unit::KelvinPerMinute),
+    ("k/h", Unit::KelvinPerHour),
+    ("c/h", Unit::KelvinPerHour),
+    ("°c/h", Unit::KelvinPerHour),
+    ("degc/h", Unit::KelvinPerHour),
+    ("k/hr", Unit::KelvinPerHour),
+    ("k/hour", Unit::KelvinPerHour),
+    ("sec", Unit::Second),
+    ("secs", Unit::Second),
+    ("second", Unit::Second),
+    ("seconds", Unit::Second),
+    ("mins", Unit::Minute),
+    ("minute", Unit::Minute),
+    ("minutes", Unit::Minute),
+    ("hr", Unit::Hour),
+    ("hrs", Unit::Hour),
+    ("hour", Unit::Hour),
+    ("hours", Unit::Hour),
+    ("stunden", Unit::Hour),
+    ("frac", Unit::Fraction),
+    ("torr", Unit::Torr),
+    ("mm hg", Unit::Torr),
+    ("pascal", Unit::Pascal),
+    ("atm", Unit::Atmosphere),
 ];
 
 /// Gauge units: size of their step in bar.
 const GAUGE: [(&str, f64); 9] = [
-    ("barg", 1.0), ("mbarg", 1e-3), ("kpag", 1e-2), ("psig", 0.068_947_572_931_683_6), ("baro", 1.0), ("barü", 1.0), ("mbarü", 1e-3), ("mmh2o", 9.806_65e-5), ("mbarover", 1e-3),
+    ("barg", 1.0),
+    ("mbarg", 1e-3),
+    ("kpag", 1e-2),
+    ("psig", 0.068_947_572_931_683_6),
+    ("baro", 1.0),
+    ("barü", 1.0),
+    ("mbarü", 1e-3),
+    ("mmh2o", 9.806_65e-5),
+    ("mbarover", 1e-3),
 ];
 
 fn folded(text: &str) -> String {
@@ -103,7 +173,11 @@ pub fn number(text: &str) -> Result<f64, EntryError> {
     let text = text.trim();
     let (value, used) = take_number(text, 1)?;
     if used < text.len() {
-        return Err(EntryError::new(format!("\u{201c}{}\u{201d} after the number", clip(&text[used..])), "nothing after it", text[..used].chars().count() + 1));
+        return Err(EntryError::new(
+            format!("\u{201c}{}\u{201d} after the number", clip(&text[used..])),
+            "nothing after it",
+            text[..used].chars().count() + 1,
+        ));
     }
     Ok(value)
 }
@@ -118,7 +192,11 @@ pub fn parse(text: &str, kind: Kind, default_unit: Unit) -> Result<Typed, EntryE
         return Ok(typed);
     }
     let units: Vec<&str> = Unit::ALL.iter().filter(|u| u.kind() == kind).map(|u| u.symbol()).collect();
-    Err(EntryError::new(format!("the unit {}", typed.quantity.unit.symbol()), format!("one of {}", units.join(", ")), 1))
+    Err(EntryError::new(
+        format!("the unit {}", typed.quantity.unit.symbol()),
+        format!("one of {}", units.join(", ")),
+        1,
+    ))
 }
 
 /// Reads a quantity of any kind; a number without a unit is in `default_unit`.
@@ -129,7 +207,11 @@ pub fn parse_any(text: &str, default_unit: Unit) -> Result<Typed, EntryError> {
     let whole = text;
     let length = whole.chars().count();
     if length > LONGEST {
-        return Err(EntryError::new(format!("{length} characters"), format!("a reading of at most {LONGEST}"), LONGEST));
+        return Err(EntryError::new(
+            format!("{length} characters"),
+            format!("a reading of at most {LONGEST}"),
+            LONGEST,
+        ));
     }
     let mut rest = whole.trim();
     let column = |rest: &str| whole.trim_end().chars().count().saturating_sub(rest.chars().count()) + 1;
@@ -144,7 +226,7 @@ pub fn parse_any(text: &str, default_unit: Unit) -> Result<Typed, EntryError> {
     let (value, used) = take_number(rest, column(rest))?;
     rest = rest[used..].trim_start();
     // The tolerance may stand before or after the unit.
-    let (before, mut tolerance) = split_tolerance(rest);
+    let (before, tolerance) = split_tolerance(rest);
     let mut unit_text = before.trim();
     let mut tolerance_unit = "";
     let tolerance_value;
@@ -158,15 +240,17 @@ pub fn parse_any(text: &str, default_unit: Unit) -> Result<Typed, EntryError> {
         tolerance_value = Some(number);
     } else {
         tolerance_value = None;
-        tolerance = None;
     }
-    let _ = tolerance;
     let (unit_text, over) = take_over(unit_text);
     let unit_text = unit_text.trim();
     let key = folded(unit_text);
     if let Some((_, step)) = GAUGE.iter().find(|(g, _)| *g == key) {
         let absolute = BAR_PER_ATM + value * step;
-        let mut e = EntryError::new(format!("a pressure over the hall, {unit_text}"), "an absolute pressure", column(unit_text));
+        let mut e = EntryError::new(
+            format!("a pressure over the hall, {unit_text}"),
+            "an absolute pressure",
+            column(unit_text),
+        );
         if absolute > 0.0 {
             e.hints.push(format!("{} bar", shortest(round_to(absolute, 1e-5))));
         }
@@ -177,7 +261,11 @@ pub fn parse_any(text: &str, default_unit: Unit) -> Result<Typed, EntryError> {
     } else {
         let found = unit(unit_text).ok_or_else(|| {
             let all: Vec<&str> = Unit::ALL.iter().map(|u| u.symbol()).collect();
-            EntryError::new(format!("the unit \u{201c}{}\u{201d}", clip(unit_text)), format!("one of {}", all.join(", ")), column(unit_text))
+            EntryError::new(
+                format!("the unit \u{201c}{}\u{201d}", clip(unit_text)),
+                format!("one of {}", all.join(", ")),
+                column(unit_text),
+            )
         })?;
         (found, true)
     };
@@ -194,7 +282,13 @@ pub fn parse_any(text: &str, default_unit: Unit) -> Result<Typed, EntryError> {
         let steps = match unit(own).filter(|_| !own.is_empty()) {
             Some(u) if u.kind() == unit_found.kind() => t * u.step() / unit_found.step(),
             _ if own.is_empty() => t,
-            _ => return Err(EntryError::new(format!("a tolerance in \u{201c}{}\u{201d}", clip(own)), format!("a tolerance in {}", unit_found.symbol()), 1)),
+            _ => {
+                return Err(EntryError::new(
+                    format!("a tolerance in \u{201c}{}\u{201d}", clip(own)),
+                    format!("a tolerance in {}", unit_found.symbol()),
+                    1,
+                ));
+            }
         };
         quantity = quantity.with_tolerance(steps, Spread::Limits).map_err(fail)?;
     }
@@ -231,8 +325,7 @@ fn split_tolerance(text: &str) -> (&str, Option<&str>) {
 fn take_over(text: &str) -> (String, Option<&'static str>) {
     let mut over = None;
     let mut kept: Vec<&str> = Vec::new();
-    let mut words = text.split_whitespace().peekable();
-    while let Some(word) = words.next() {
+    for word in text.split_whitespace() {
         match word.to_lowercase().trim_end_matches(',') {
             "fp" | "frost" | "frostpoint" | "ice" => over = Some("ice"),
             "water" => over = Some("water"),
@@ -283,9 +376,15 @@ fn take_number(text: &str, column: usize) -> Result<(f64, usize), EntryError> {
     let plain = settle(&body, sign, column)?;
     let (exponent, used) = take_exponent(&text[end..]);
     end += used;
-    let value: f64 = format!("{sign}{plain}e{exponent}").parse().map_err(|_| EntryError::new(format!("\u{201c}{}\u{201d}", clip(&text[..end])), wanted, column))?;
+    let value: f64 = format!("{sign}{plain}e{exponent}")
+        .parse()
+        .map_err(|_| EntryError::new(format!("\u{201c}{}\u{201d}", clip(&text[..end])), wanted, column))?;
     if !value.is_finite() {
-        return Err(EntryError::new(format!("\u{201c}{}\u{201d}", clip(&text[..end])), "a number below 10^308", column));
+        return Err(EntryError::new(
+            format!("\u{201c}{}\u{201d}", clip(&text[..end])),
+            "a number below 10^308",
+            column,
+        ));
     }
     Ok((value, end))
 }
@@ -316,10 +415,13 @@ fn settle(body: &str, sign: &str, column: usize) -> Result<String, EntryError> {
             0 => {}
             1 => {
                 let (before, after) = body.split_once(c).unwrap_or((body, ""));
-                let ambiguous = !spaced && after.len() == 3 && (1..=3).contains(&before.len()) && !before.starts_with('0');
+                let ambiguous =
+                    !spaced && after.len() == 3 && (1..=3).contains(&before.len()) && !before.starts_with('0');
                 if ambiguous {
                     let mut e = EntryError::new(
-                        format!("\u{201c}{sign}{body}\u{201d}, which may be {sign}{before}{after} or {sign}{before}.{after}"),
+                        format!(
+                            "\u{201c}{sign}{body}\u{201d}, which may be {sign}{before}{after} or {sign}{before}.{after}"
+                        ),
                         "one that can be read one way only",
                         column,
                     );

@@ -157,7 +157,11 @@ impl Equation {
                 .filter(|t| t.coefficient.is_positive() == positive)
                 .map(|t| {
                     let n = t.coefficient.abs();
-                    if n.is_one() { t.species.text() } else { alloc::format!("{} {}", number_text(&n), t.species.text()) }
+                    if n.is_one() {
+                        t.species.text()
+                    } else {
+                        alloc::format!("{} {}", number_text(&n), t.species.text())
+                    }
                 })
                 .collect();
             parts.join(" + ")
@@ -189,7 +193,9 @@ pub(crate) fn number_text(n: &BigRational) -> String {
 
 /// A sum of equations starts with a bracket, perhaps after a sign or a number, that holds a whole equation.
 fn is_sum(text: &str) -> bool {
-    let body = text.trim_start_matches(|c: char| c.is_ascii_digit() || matches!(c, ' ' | '*' | '.' | ',' | '/' | '+' | '-' | '\u{2212}' | '·' | '×'));
+    let body = text.trim_start_matches(|c: char| {
+        c.is_ascii_digit() || matches!(c, ' ' | '*' | '.' | ',' | '/' | '+' | '-' | '\u{2212}' | '·' | '×')
+    });
     let Some(rest) = body.strip_prefix(['(', '[', '{']) else { return false };
     let mut depth = 1;
     for (i, c) in rest.char_indices() {
@@ -234,7 +240,8 @@ fn parse_sum(text: &str) -> Result<Equation, EquationError> {
             _ => {}
         }
         first = false;
-        let (factor, after) = take_number(rest).map_err(|found| EquationError::Coefficient { token: clip(rest), found })?;
+        let (factor, after) =
+            take_number(rest).map_err(|found| EquationError::Coefficient { token: clip(rest), found })?;
         let after = after.trim_start().trim_start_matches(['*', '·', '×']).trim_start();
         let Some(inside) = after.strip_prefix(['(', '[', '{']) else {
             return Err(EquationError::Sum {
@@ -253,7 +260,11 @@ fn parse_sum(text: &str) -> Result<Equation, EquationError> {
             (depth == 0).then_some(i)
         });
         let Some(end) = end else {
-            return Err(EquationError::Sum { token: clip(after), found: "a bracket left open".to_string(), expected: "\u{201c})\u{201d}".to_string() });
+            return Err(EquationError::Sum {
+                token: clip(after),
+                found: "a bracket left open".to_string(),
+                expected: "\u{201c})\u{201d}".to_string(),
+            });
         };
         let step = Equation::parse(&inside[..end])?.times(&(sign * factor.unwrap_or_else(BigRational::one)));
         for term in step.terms {
@@ -278,7 +289,8 @@ fn clip(text: &str) -> String {
 
 /// Cuts at every `=`, `->`, `=>`, `<=>`, or arrow.
 fn split_sides(text: &str) -> Vec<String> {
-    let mut plain = text.replace("<=>", "=").replace("<->", "=").replace("-->", "=").replace("=>", "=").replace("->", "=");
+    let mut plain =
+        text.replace("<=>", "=").replace("<->", "=").replace("-->", "=").replace("=>", "=").replace("->", "=");
     for arrow in ['→', '⇌', '⟶', '⇒', '↔', '⇄'] {
         plain = plain.replace(arrow, "=");
     }
@@ -324,16 +336,27 @@ fn parse_single(text: &str) -> Result<Equation, EquationError> {
                 });
             }
             let species = Species::parse(name).map_err(|e| match e {
-                SpeciesError::Formula(e) => EquationError::Species { token: clip(token), found: e.found, expected: e.expected },
+                SpeciesError::Formula(e) => {
+                    EquationError::Species { token: clip(token), found: e.found, expected: e.expected }
+                }
                 other => EquationError::Species {
                     token: clip(token),
-                    found: other.to_string().split(", expected").next().unwrap_or("").trim_start_matches("found ").to_string(),
+                    found: other
+                        .to_string()
+                        .split(", expected")
+                        .next()
+                        .unwrap_or("")
+                        .trim_start_matches("found ")
+                        .to_string(),
                     expected: "a solid (s), liquid (l) or gas (g)".to_string(),
                 },
             })?;
             any_coefficient |= coefficient.is_some();
             let n = coefficient.unwrap_or_else(BigRational::one) * BigRational::from(BigInt::from(sign));
-            match terms.iter_mut().find(|t| t.species.text() == species.text() && t.coefficient.is_positive() == n.is_positive()) {
+            match terms
+                .iter_mut()
+                .find(|t| t.species.text() == species.text() && t.coefficient.is_positive() == n.is_positive())
+            {
                 Some(t) => t.coefficient += n,
                 None => terms.push(Term { species, coefficient: n }),
             }
@@ -382,7 +405,11 @@ fn balance(mut terms: Vec<Term>) -> Result<Equation, EquationError> {
         if !(left && right) {
             let (here, there) = if left { ("left", "right") } else { ("right", "left") };
             return Err(EquationError::Unbalanceable {
-                why: alloc::format!("{} stands on the {here} only; something with {} is missing on the {there}", e.symbol(), e.symbol()),
+                why: alloc::format!(
+                    "{} stands on the {here} only; something with {} is missing on the {there}",
+                    e.symbol(),
+                    e.symbol()
+                ),
             });
         }
     }
@@ -417,7 +444,9 @@ fn balance(mut terms: Vec<Term>) -> Result<Equation, EquationError> {
             });
         }
         if n.is_positive() != t.coefficient.is_positive() {
-            return Err(EquationError::Unbalanceable { why: alloc::format!("{} belongs on the other side", t.species.text()) });
+            return Err(EquationError::Unbalanceable {
+                why: alloc::format!("{} belongs on the other side", t.species.text()),
+            });
         }
     }
     for (t, n) in terms.iter_mut().zip(v) {
@@ -454,7 +483,8 @@ fn gcd(a: BigInt, b: BigInt) -> BigInt {
 /// A leading coefficient and what follows it. `Err` carries the text of a coefficient that is none.
 fn take_number(text: &str) -> Result<(Option<BigRational>, &str), String> {
     let text = text.trim_start();
-    for (sign, n, d) in [('½', 1, 2), ('⅓', 1, 3), ('⅔', 2, 3), ('¼', 1, 4), ('¾', 3, 4), ('⅕', 1, 5), ('⅙', 1, 6)] {
+    for (sign, n, d) in [('½', 1, 2), ('⅓', 1, 3), ('⅔', 2, 3), ('¼', 1, 4), ('¾', 3, 4), ('⅕', 1, 5), ('⅙', 1, 6)]
+    {
         if let Some(rest) = text.strip_prefix(sign) {
             return Ok((Some(BigRational::new(BigInt::from(n), BigInt::from(d))), rest));
         }

@@ -80,12 +80,14 @@ impl Reaction {
         for term in &equation.terms {
             let species = &term.species;
             let formula = species.formula.text();
-            let substance = book.find(formula).ok_or_else(|| LookupError::NoSubstance { formula: formula.to_string() })?;
+            let substance =
+                book.find(formula).ok_or_else(|| LookupError::NoSubstance { formula: formula.to_string() })?;
             let class = book.class_of(substance, &species.asked);
             let candidates = book.candidates(substance, &species.asked, &holds)?;
             let classes = |c: Class| book.substances[substance].records.iter().any(|r| r.class == c);
             if species.asked == Asked::Any && classes(Class::Gas) && classes(Class::Condensed) && class == Class::Gas {
-                notes.push(alloc::format!("{formula} is read as gas; write {formula}(l) or {formula}(s) for the other"));
+                notes
+                    .push(alloc::format!("{formula} is read as gas; write {formula}(l) or {formula}(s) for the other"));
             }
             used.push(Used {
                 formula: formula.to_string(),
@@ -207,7 +209,9 @@ impl Reaction {
         }
         let mut ratio = None;
         self.used.iter().all(|u| {
-            let Some(v) = other.used.iter().find(|v| v.substance == u.substance && v.class == u.class) else { return false };
+            let Some(v) = other.used.iter().find(|v| v.substance == u.substance && v.class == u.class) else {
+                return false;
+            };
             let r = u.nu / v.nu;
             let first = *ratio.get_or_insert(r);
             (r - first).abs() < 1e-9 * first.abs()
@@ -238,7 +242,11 @@ impl Reaction {
         let mut grid = Vec::new();
         for pair in kinks.windows(2) {
             let (a, b) = (pair[0], pair[1]);
-            #[expect(clippy::cast_possible_truncation, clippy::cast_sign_loss, reason = "a count of at most a few hundred")]
+            #[expect(
+                clippy::cast_possible_truncation,
+                clippy::cast_sign_loss,
+                reason = "a count of at most a few hundred"
+            )]
             let n = leeway_quantity::math::ceil((b - a) / CELL_K).max(1.0) as usize;
             for i in 0..n {
                 #[expect(clippy::cast_precision_loss, reason = "a count of at most a few hundred")]

@@ -221,9 +221,13 @@ impl Parser<'_> {
             i += 1;
         }
         let digits = i - self.at - 1;
-        let before_is_zero = self.at >= 1 && self.chars[self.at - 1] == '0' && !(self.at >= 2 && self.chars[self.at - 2].is_ascii_digit());
+        let before_is_zero = self.at >= 1
+            && self.chars[self.at - 1] == '0'
+            && !(self.at >= 2 && self.chars[self.at - 2].is_ascii_digit());
         let rest: String = self.chars[i..].iter().collect();
-        !before_is_zero && digits <= 2 && (rest.starts_with("H2O") || rest.starts_with("(H2O)") || rest.starts_with("H₂O"))
+        !before_is_zero
+            && digits <= 2
+            && (rest.starts_with("H2O") || rest.starts_with("(H2O)") || rest.starts_with("H₂O"))
     }
 }
 

@@ -13,7 +13,7 @@ mod parse;
 mod phase;
 mod species;
 
-pub use book::{Book, Chosen, Class, LookupError, Record, Source, Substance, MARGIN_ABOVE_K, MARGIN_BELOW_K};
+pub use book::{Book, Chosen, Class, LookupError, MARGIN_ABOVE_K, MARGIN_BELOW_K, Record, Source, Substance};
 pub use element::Element;
 pub use formula::{Formula, FormulaError};
 pub use parse::DataError;

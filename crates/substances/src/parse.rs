@@ -108,8 +108,8 @@ impl Reader {
             "substance" => {
                 self.close_substance()?;
                 self.in_source = false;
-                let formula = Formula::parse(rest)
-                    .map_err(|e| self.error(alloc::format!("{rest}, {}", e.found), &e.expected))?;
+                let formula =
+                    Formula::parse(rest).map_err(|e| self.error(alloc::format!("{rest}, {}", e.found), &e.expected))?;
                 if self.book.index.contains_key(rest) {
                     return Err(self.error(alloc::format!("substance {rest} again"), "each formula once"));
                 }
@@ -129,7 +129,9 @@ impl Reader {
                 let mut words = rest.split_whitespace();
                 let (value, mark, u) = (words.next(), words.next(), words.next());
                 let (Some(value), Some("u"), Some(u), None) = (value, mark, u, words.next()) else {
-                    return Err(self.error(alloc::format!("\u{201c}{rest}\u{201d}"), "\u{201c}VALUE u UNCERTAINTY\u{201d}"));
+                    return Err(
+                        self.error(alloc::format!("\u{201c}{rest}\u{201d}"), "\u{201c}VALUE u UNCERTAINTY\u{201d}")
+                    );
                 };
                 let value = self.number(value, key)?;
                 let u = self.number(u, "its standard uncertainty")?;
@@ -161,14 +163,17 @@ impl Reader {
         let preferred = match (words.next(), words.next()) {
             (None, _) => false,
             (Some("preferred"), None) => true,
-            _ => return Err(self.error(alloc::format!("\u{201c}{rest}\u{201d}"), "\u{201c}set SOURCE\u{201d} or \u{201c}set SOURCE preferred\u{201d}")),
+            _ => {
+                return Err(self.error(
+                    alloc::format!("\u{201c}{rest}\u{201d}"),
+                    "\u{201c}set SOURCE\u{201d} or \u{201c}set SOURCE preferred\u{201d}",
+                ));
+            }
         };
-        let source = self
-            .book
-            .sources
-            .iter()
-            .position(|s| s.key == key)
-            .ok_or_else(|| self.error(alloc::format!("source \u{201c}{key}\u{201d}"), "a source listed at the head"))?;
+        let source =
+            self.book.sources.iter().position(|s| s.key == key).ok_or_else(|| {
+                self.error(alloc::format!("source \u{201c}{key}\u{201d}"), "a source listed at the head")
+            })?;
         let line = self.line;
         let missing = self.error("a set outside a substance", "\u{201c}substance FORMULA\u{201d} before it");
         let substance = self.book.substances.last_mut().ok_or(missing)?;
@@ -193,7 +198,9 @@ impl Reader {
     fn open_phase(&mut self, rest: &str) -> Result<(), DataError> {
         let words: Vec<&str> = rest.split_whitespace().collect();
         let [name, state, low, high, more @ ..] = words.as_slice() else {
-            return Err(self.error(alloc::format!("\u{201c}{rest}\u{201d}"), "\u{201c}phase NAME STATE LOW HIGH\u{201d}"));
+            return Err(
+                self.error(alloc::format!("\u{201c}{rest}\u{201d}"), "\u{201c}phase NAME STATE LOW HIGH\u{201d}")
+            );
         };
         let state = match *state {
             "s" => State::Solid,
@@ -209,7 +216,12 @@ impl Reader {
             [] => (None, false),
             ["metastable"] => (None, true),
             ["beside", f] => (Some((*f).to_string()), false),
-            _ => return Err(self.error(alloc::format!("\u{201c}{}\u{201d}", more.join(" ")), "\u{201c}beside FORMULA\u{201d} or \u{201c}metastable\u{201d}")),
+            _ => {
+                return Err(self.error(
+                    alloc::format!("\u{201c}{}\u{201d}", more.join(" ")),
+                    "\u{201c}beside FORMULA\u{201d} or \u{201c}metastable\u{201d}",
+                ));
+            }
         };
         let class = if state == State::Gas { Class::Gas } else { Class::Condensed };
         let mixed = self.error("a gas phase beside condensed ones", "gas and condensed phases in sets of their own");
@@ -227,7 +239,10 @@ impl Reader {
     fn add_span(&mut self, rest: &str) -> Result<(), DataError> {
         let words: Vec<&str> = rest.split_whitespace().collect();
         let [low, high, "h", h, "s", s, "cp", terms @ ..] = words.as_slice() else {
-            return Err(self.error(alloc::format!("\u{201c}{rest}\u{201d}"), "\u{201c}span LOW HIGH h H s S cp EXPONENT:COEFFICIENT ...\u{201d}"));
+            return Err(self.error(
+                alloc::format!("\u{201c}{rest}\u{201d}"),
+                "\u{201c}span LOW HIGH h H s S cp EXPONENT:COEFFICIENT ...\u{201d}",
+            ));
         };
         let low = self.number(low, "the lower temperature")?;
         let high = self.number(high, "the upper temperature")?;
@@ -265,30 +280,50 @@ impl Reader {
         let line = self.line;
         let record = self.record()?;
         let Some(phase) = record.phases.last_mut() else {
-            return Err(DataError { line, found: "a span outside a phase".to_string(), expected: "\u{201c}phase\u{201d} before it".to_string() });
+            return Err(DataError {
+                line,
+                found: "a span outside a phase".to_string(),
+                expected: "\u{201c}phase\u{201d} before it".to_string(),
+            });
         };
         if phase.spans.last().is_some_and(|s| s.h_j.is_nan()) {
             let stated = phase.spans[0].low_k;
             if (stated - low).abs() > 1e-9 {
-                return Err(DataError { line, found: alloc::format!("a span from {low} K"), expected: alloc::format!("the phase's lower end, {stated} K") });
+                return Err(DataError {
+                    line,
+                    found: alloc::format!("a span from {low} K"),
+                    expected: alloc::format!("the phase's lower end, {stated} K"),
+                });
             }
             let high_stated = phase.spans[0].high_k;
             phase.spans.clear();
             phase.spans.push(span);
             if high > high_stated + 1e-9 {
-                return Err(DataError { line, found: alloc::format!("a span to {high} K"), expected: alloc::format!("at most {high_stated} K") });
+                return Err(DataError {
+                    line,
+                    found: alloc::format!("a span to {high} K"),
+                    expected: alloc::format!("at most {high_stated} K"),
+                });
             }
             return Ok(());
         }
         if let Some(before) = phase.spans.last() {
             if (before.high_k - low).abs() > 1e-9 {
-                return Err(DataError { line, found: alloc::format!("a span from {low} K"), expected: alloc::format!("the end of the span before, {} K", before.high_k) });
+                return Err(DataError {
+                    line,
+                    found: alloc::format!("a span from {low} K"),
+                    expected: alloc::format!("the end of the span before, {} K", before.high_k),
+                });
             }
             let (a, b) = (before.values(low), span.values(low));
             if (a.g_j - b.g_j).abs() > JOIN_J || (a.h_j - b.h_j).abs() > JOIN_J {
                 return Err(DataError {
                     line,
-                    found: alloc::format!("a step of {:.3} kJ in G and {:.3} kJ in H at {low} K", (b.g_j - a.g_j) * 1e-3, (b.h_j - a.h_j) * 1e-3),
+                    found: alloc::format!(
+                        "a step of {:.3} kJ in G and {:.3} kJ in H at {low} K",
+                        (b.g_j - a.g_j) * 1e-3,
+                        (b.h_j - a.h_j) * 1e-3
+                    ),
                     expected: "spans that join within 0.1 kJ (a real transition is a phase of its own)".to_string(),
                 });
             }
@@ -345,23 +380,42 @@ fn check_record(formula: &str, record: &Record, line: usize) -> Result<(), DataE
         return fail(alloc::format!("{formula}, preferred without a reason"), "a line \u{201c}why\u{201d}");
     }
     if record.doubt.is_empty() || record.made.is_empty() {
-        return fail(alloc::format!("{formula} without \u{201c}doubt\u{201d} or \u{201c}made\u{201d}"), "the reason for the uncertainty, and how the figures were made");
+        return fail(
+            alloc::format!("{formula} without \u{201c}doubt\u{201d} or \u{201c}made\u{201d}"),
+            "the reason for the uncertainty, and how the figures were made",
+        );
     }
     if let Some(phase) = record.phases.iter().find(|p| p.spans.iter().any(|s| s.h_j.is_nan())) {
         return fail(alloc::format!("{formula}, phase {} without a span", phase.name), "at least one span");
     }
     if record.anchored {
         let t = REFERENCE_TEMPERATURE_K;
-        let stable = record.phases.iter().filter(|p| p.holds(t) && !p.metastable).map(|p| p.values(t)).reduce(|a, b| if b.g_j < a.g_j { b } else { a });
+        let stable = record
+            .phases
+            .iter()
+            .filter(|p| p.holds(t) && !p.metastable)
+            .map(|p| p.values(t))
+            .reduce(|a, b| if b.g_j < a.g_j { b } else { a });
         let Some(values) = stable else {
-            return fail(alloc::format!("{formula}, no phase at 298.15 K"), "a phase that reaches it, or \u{201c}anchor none\u{201d}");
+            return fail(
+                alloc::format!("{formula}, no phase at 298.15 K"),
+                "a phase that reaches it, or \u{201c}anchor none\u{201d}",
+            );
         };
         let dh = values.h_j - record.h298_kj * 1e3;
         let ds = values.s_j_per_k - record.s298_j_per_k;
         if dh.abs() > H298_J || ds.abs() > S298_J_PER_K {
             return fail(
-                alloc::format!("{formula}: the spans give H298 {:.3} kJ and S298 {:.3} J/K", values.h_j * 1e-3, values.s_j_per_k),
-                &alloc::format!("{} kJ and {} J/K as stated, within 0.02 kJ and 0.05 J/K", record.h298_kj, record.s298_j_per_k),
+                alloc::format!(
+                    "{formula}: the spans give H298 {:.3} kJ and S298 {:.3} J/K",
+                    values.h_j * 1e-3,
+                    values.s_j_per_k
+                ),
+                &alloc::format!(
+                    "{} kJ and {} J/K as stated, within 0.02 kJ and 0.05 J/K",
+                    record.h298_kj,
+                    record.s298_j_per_k
+                ),
             );
         }
     }
@@ -370,11 +424,22 @@ fn check_record(formula: &str, record: &Record, line: usize) -> Result<(), DataE
         let (a, b) = (pair[0], pair[1]);
         let t = b.low_k();
         if a.high_k() < t - 1e-9 {
-            return fail(alloc::format!("{formula}: a gap from {} to {t} K between {} and {}", a.high_k(), a.name, b.name), "phases that meet");
+            return fail(
+                alloc::format!("{formula}: a gap from {} to {t} K between {} and {}", a.high_k(), a.name, b.name),
+                "phases that meet",
+            );
         }
         let step = b.values(t).g_j - a.values(t).g_j;
         if (a.high_k() - t).abs() < 1e-9 && step.abs() > JOIN_J {
-            return fail(alloc::format!("{formula}: a step of {:.3} kJ in G at {t} K from {} to {}", step * 1e-3, a.name, b.name), "phases that meet within 0.1 kJ");
+            return fail(
+                alloc::format!(
+                    "{formula}: a step of {:.3} kJ in G at {t} K from {} to {}",
+                    step * 1e-3,
+                    a.name,
+                    b.name
+                ),
+                "phases that meet within 0.1 kJ",
+            );
         }
     }
     Ok(())

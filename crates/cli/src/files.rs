@@ -1,0 +1,39 @@
+//! The only place in Rust that touches files.
+
+use leeway_api::response::Problem;
+use std::io::Read;
+use std::path::Path;
+
+/// A line file is refused above 4 MB: no more than this is read, so that a huge file costs nothing.
+const MOST: u64 = 4_000_001;
+
+/// Bytes of a file, or of standard input for `-`.
+///
+/// A directory, a missing file and a file that may not be read are problems that name it.
+pub(crate) fn read(path: &Path) -> Result<Vec<u8>, Problem> {
+    let name = if path.as_os_str() == "-" { "standard input".to_owned() } else { path.display().to_string() };
+    let mut bytes = Vec::new();
+    let taken = if path.as_os_str() == "-" {
+        std::io::stdin().lock().take(MOST).read_to_end(&mut bytes)
+    } else {
+        std::fs::File::open(path).and_then(|f| {
+            let size = f.metadata().map_or(0, |m| m.len());
+            let n = f.take(MOST).read_to_end(&mut bytes)?;
+            if size > MOST {
+                // Tells the reader the true size without holding it.
+                bytes.resize(usize::try_from(MOST).unwrap_or(usize::MAX), 0);
+            }
+            Ok(n)
+        })
+    };
+    taken.map_err(|e| Problem {
+        code: "file.read".to_owned(),
+        at: String::new(),
+        place: name.clone(),
+        message: format!("{name} is not read: {e}"),
+        found: e.to_string(),
+        expected: "a line file that can be read".to_owned(),
+        hints: Vec::new(),
+    })?;
+    Ok(bytes)
+}
