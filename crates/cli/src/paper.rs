@@ -46,9 +46,10 @@ fn short(x: f64) -> String {
     } else if !(1e-3..1e6).contains(&size) {
         format!("{x:.3e}")
     } else {
-        // Five significant digits, so that 1.025 bar stays 1.025 bar.
-        let decimals = (4 - size.log10().floor().max(-4.0) as i32).clamp(0, 8);
-        let text = format!("{x:.*}", usize::try_from(decimals).unwrap_or(0));
+        // Five significant digits, so that 1.025 bar stays 1.025 bar; below 1e-3 the exponent form is taken.
+        let whole = (0..6).take_while(|n| size >= f64::from(10u32.pow(*n))).count();
+        let decimals = if whole > 0 { 5usize.saturating_sub(whole) } else { 7 };
+        let text = format!("{x:.decimals$}");
         if text.contains('.') { text.trim_end_matches('0').trim_end_matches('.').to_owned() } else { text }
     };
     text.replacen('-', "\u{2212}", 1)
