@@ -113,6 +113,12 @@ def run(text, substances):
     ratio("Ni/NiO H2O/H2", "NiO + H2(g) = Ni + H2O(g)", (500, 700, 900), (285, 196, 146), 0.02)
     ratio("Ni/NiO pO2, bar", "2 NiO = 2 Ni + O2(g)", (900,), (1.1e-12,), 0.02)
     ratio("Cu/Cu2O pO2, bar", "2 Cu2O = 4 Cu + O2(g)", (900,), (4.1e-8,), 0.03)
+    # Holmes, O'Neill and Arculus (1986), Geochim. Cosmochim. Acta 50, 2439: galvanic cells, 1300 K, good to 0.1-0.2 kJ
+    for equation, w in (
+        ("2 Cu + 0.5 O2(g) = Cu2O", -73.950), ("Ni + 0.5 O2(g) = NiO", -123.555), ("Co + 0.5 O2(g) = CoO", -142.150),
+        ("0.947 Fe + 0.5 O2(g) = Fe0.947O", -179.459),
+    ):
+        row(f"{equation}, kJ at 1300 K", dg(equation, 1300) / 1000, w, 1.0 if "Fe" in equation else 0.3, False)
     ratio("W/WO2 H2O/H2", "WO2 + 2 H2(g) = W + 2 H2O(g)", (800, 900, 1000), (0.37, 0.55, 0.76), 0.12, 0.5)
     ratio("Mo/MoO2 H2O/H2", "MoO2 + 2 H2(g) = Mo + 2 H2O(g)", (800, 900, 1000), (0.41, 0.61, 0.82), 0.12, 0.5)
     chrome = lambda c, a=1.0: (k("Cr2O3 + 3 H2(g) = 2 Cr + 3 H2O(g)", c + 273.15) / a**2) ** (1 / 3)
@@ -153,6 +159,8 @@ def run(text, substances):
     row("heat of dolomite at 25 C, kJ", heat("CaMg(CO3)2 = CaO + MgO + 2 CO2(g)", T0), 301.6, 0.01)
     t = bisect(lambda t: dg("CaMg(CO3)2 = CaCO3 + MgO + CO2(g)", t) + RGAS * t * log(0.25 * 1.01325), 500, 1000)
     row("dolomite half turns at 0.25 atm, C", C(t), 384, 10, False)
+    row("MgO + Al2O3 = MgAl2O4, kJ at 1100 K", dg("MgO + Al2O3 = MgAl2O4", 1100) / 1000, -30.1, 3, False)
+    row("MgO + Cr2O3 = MgCr2O4, kJ at 1300 K", dg("MgO + Cr2O3 = MgCr2O4", 1300) / 1000, -38.2, 0.5, False)
     t = bisect(lambda t: dg("3 Fe + C = Fe3C", t), 800, 1400)
     row("3 Fe + C = Fe3C turns, K", t, 1087, 15, False)
     t = 673.15

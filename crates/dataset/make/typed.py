@@ -81,6 +81,59 @@ SOURCES = {
         "J. Am. Ceram. Soc. 88, 2578-2585.",
         FACTS,
     ),
+    "Iwai-1986": (
+        "Iwai et al. 1986",
+        "Iwai, T.; Takahashi, I.; Handa, M. (1986). Gibbs free energies of formation of molybdenum carbide and tungsten carbide from "
+        "1173 to 1573 K. Metall. Trans. A 17, 2031-2034.",
+        FACTS,
+    ),
+    "Aluminates-1989": (
+        "Galvanic cells 1989",
+        "Standard free energies of formation of CaO-Al2O3 compounds measured by galvanic cells (1989). Tetsu-to-Hagane 75, 2023.",
+        FACTS,
+    ),
+    "Jacob-1977": (
+        "Jacob 1977",
+        "Jacob, K. T. (1977). Potentiometric determination of the Gibbs free energy of formation of cadmium and magnesium chromites. "
+        "J. Electrochem. Soc. 124, 1827-1831.",
+        FACTS,
+    ),
+    "Jacob-1998": (
+        "Jacob et al. 1998",
+        "Jacob, K. T.; Jayadevan, K. P.; Waseda, Y. (1998). Electrochemical determination of the Gibbs energy of formation of MgAl2O4. "
+        "J. Am. Ceram. Soc. 81, 209-212.",
+        FACTS,
+    ),
+    "Jacob-1999": (
+        "Jacob et al. 1999",
+        "Jacob, K. T.; Dasgupta, N.; Waseda, Y. (1999). Thermodynamic properties of the calcium ferrites CaFe2O4 and Ca2Fe2O5. "
+        "Z. Metallkd. 90, 486-490.",
+        FACTS,
+    ),
+    "Jacob-2009": (
+        "Jacob and Abraham 2009",
+        "Jacob, K. T.; Abraham, K. P. (2009). Thermodynamic properties of calcium titanates: CaTiO3, Ca4Ti3O10, and Ca3Ti2O7. "
+        "J. Chem. Thermodyn. 41(6).",
+        FACTS,
+    ),
+    "Holzheid-ONeill-1995": (
+        "Holzheid and O'Neill 1995",
+        "Holzheid, A.; O'Neill, H. St. C. (1995). The Cr-Cr2O3 oxygen buffer and the free energy of formation of Cr2O3 from "
+        "high-temperature electrochemical measurements. Geochim. Cosmochim. Acta 59, 475-479.",
+        FACTS,
+    ),
+    "Plyasunov-2011": (
+        "Plyasunov 2011",
+        "Plyasunov, A. V. (2011). Thermodynamic properties of H4SiO4 in the ideal gas state as evaluated from experimental data. "
+        "Geochim. Cosmochim. Acta 75. Entropy at 1200 K: Jacobson, N. S. et al. (2005), J. Chem. Thermodyn. 37, 1130-1137.",
+        FACTS,
+    ),
+    "Opila-2007": (
+        "Opila et al. 2007, from memory",
+        "Opila, E. J. et al. (2007). Theoretical and experimental investigation of the thermochemistry of CrO2(OH)2(g). "
+        "J. Phys. Chem. A 111, 1971-1980. The two figures are from memory and not checked.",
+        FACTS,
+    ),
 }
 
 # Written by hand: (u of H298, u of S298, doubt) by class of evidence.
@@ -101,7 +154,7 @@ def usual_reason(record):
 
 # (formula, gas) to (source, reason), where more than one set stands.
 PREFERRED = {
-    ("Cr2O3", False): ("JANAF-1998", "nearest to the direct H2/H2O measurement (Jeannin 1963)"),
+    ("Cr2O3", False): ("JANAF-1998", "calorimetry down to room temperature; within 1.2 K of dew point of the direct H2/H2O measurement (Jeannin 1963)"),
     ("Fe2O3", False): ("JANAF-1998", "gives magnetite in air at 1384 C, textbooks about 1390"),
     ("Fe3O4", False): ("JANAF-1998", "one evaluation with Fe2O3; iron-magnetite below 500 C"),
     ("Fe0.947O", False): ("Robie-Hemingway-1995", "meets iron and magnetite nearest to the known 843 K"),
@@ -123,6 +176,9 @@ PREFERRED = {
     ("Fe2SiO4", False): ("Berman-1988", "fits the measured quartz-iron-fayalite equilibria"),
     ("CaMg(CO3)2", False): ("Berman-1988", "gives the measured decomposition; newer set within 1 kJ"),
     ("FeTiO3", False): ("Berman-1988", "phase equilibria; newer set within 2 kJ"),
+    ("MgCr2O4", False): ("Jacob-1977", "measured from the oxides by galvanic cell, 800 to 1200 C"),
+    ("WC", False): ("NASA-Glenn-2002", "reaches room temperature by calorimetry"),
+    ("MgAl2O4", False): ("NASA-Glenn-2002", "reaches the melt; measured free energies from the oxides within 2 kJ"),
     ("CuCl2", False): ("JANAF-1998", "newer enthalpy of formation"),
 }
 
@@ -677,4 +733,66 @@ def combined(book, have):
             f"from the oxides; residual {digits(worst / 1000, 2)} kJ/mol",
             "one temperature; entropy of formation from the oxides unknown within 4 J/K, and Cr2O3 within 4 kJ", [Phase("spinel", "s", [made])],
         )))
+
+    def reaction(source, formula, name, parts, a, b, measured, low, high, evidence, gas=False, note=""):
+        """A phase from a measured free energy a + b T (J) of its formation from other records of this file."""
+        fs = [(mpf(str(n)), g(f, is_gas)) for n, f, is_gas in parts]
+        made, worst = fit_g(
+            lambda t: sum(n * f(t) for n, f in fs) + mpf(str(a)) + mpf(str(b)) * t, low, high, [-2, 0, 1, 2],
+        )
+        uh, us, why = evidence
+        words = " + ".join(f"{digits(n)} {f}" if n != 1 else f for n, f, _ in parts)
+        text = (
+            f"measured from {words}, {a} {'+' if b >= 0 else '-'} {abs(b)} T J at {measured} K; carried beyond with the same heat and entropy; "
+            f"residual {digits(worst / 1000, 2)} kJ/mol"
+        )
+        out.append((formula, Record(
+            source, made.H(T0) / 1000, uh, made.S(T0), us, text + note, why, [Phase(name, "g" if gas else "s", [made])],
+        )))
+
+    cell = (3.0, 1.5, "free energy from the oxides within 1 kJ; doubt of the oxides comes on top")
+    S, G_ = False, True
+    reaction("Iwai-1986", "Mo2C", "cr", [(2, "Mo", S), (1, "C", S)], -68270, 8.23, "1173 to 1573", T0, 2000,
+             (4.0, 2.0, "CH4/H2 and CO/CO2 equilibria agree within a few kJ"))
+    reaction("Iwai-1986", "WC", "cr", [(1, "W", S), (1, "C", S)], -52330, 14.06, "1173 to 1573", T0, 2000,
+             (4.0, 2.0, "CH4/H2 and CO/CO2 equilibria agree within a few kJ; combustion calorimetry gives 12 kJ less heat"))
+    for formula, m, n, a, b, top in (
+        ("CaAl12O19", 1, 6, -16380, -37.58, 2100), ("CaAl4O7", 1, 2, -15650, -25.82, 2000), ("CaAl2O4", 1, 1, -17910, -17.38, 1870),
+        ("Ca3Al2O6", 3, 1, -11790, -28.27, 1810),
+    ):
+        reaction("Aluminates-1989", formula, "cr", [(m, "CaO", S), (n, "Al2O3", S)], a, b, "1373 to 1873", T0, top, cell)
+    reaction("Jacob-1977", "MgCr2O4", "picrochromite", [(1, "MgO", S), (1, "Cr2O3", S)], -45200, 5.36, "1073 to 1473", T0, 2300,
+             (4.5, 1.8, "free energy from the oxides within 0.4 kJ; Cr2O3 within 4 kJ"))
+    reaction("Jacob-1977", "CdCr2O4", "spinel", [(1, "CdO", S), (1, "Cr2O3", S)], -42260, 7.53, "773 to 1003", T0, 1270,
+             (4.5, 2.5, "free energy from the oxides within 0.4 kJ; Cr2O3 within 4 kJ"))
+    reaction("Jacob-1998", "MgAl2O4", "spinel", [(1, "MgO", S), (1, "Al2O3", S)], -23600, -5.91, "900 to 1250", T0, 2300, cell)
+    reaction("Jacob-1999", "CaFe2O4", "cr", [(1, "CaO", S), (1, "Fe2O3", S)], -37480, 1.16, "975 to 1275", T0, 1480, cell)
+    reaction("Jacob-1999", "Ca2Fe2O5", "cr", [(2, "CaO", S), (1, "Fe2O3", S)], -45280, -13.51, "975 to 1275", T0, 1720, cell)
+    reaction("Jacob-2009", "CaTiO3", "perovskite", [(1, "CaO", S), (1, "TiO2", S)], -80140, -6.302, "900 to 1250", T0, 2150,
+             (1.5, 1.0, "free energy from the oxides within 0.1 kJ; doubt of the oxides comes on top"))
+    reaction("Opila-2007", "CrO2(OH)2", "gas", [(0.5, "Cr2O3", S), (0.75, "O2", G_), (1, "H2O", G_)], 53500, 45.5, "573 to 1173", T0, 1800,
+             (10.0, 6.0, "reaction heat and entropy from memory; laboratories differ by 10 kJ and more"), gas=True)
+
+    # chromium and its oxide by galvanic cell, beyond the range of metal and oxide held by the JANAF heat capacity
+    mu = potential("-758585", "349.718", "-25.5216", "0.00935")
+    cr = g("Cr")
+    made, worst = fit_g(lambda t: mpf("1.5") * (mu(t) + O2(t)) + 2 * cr(t), 600, 1800, [-2, 0, 1])
+    phase = Phase("eskolaite", "s", [made])
+    table = have[("Cr2O3", "JANAF-1998", False)].phases[0]
+    for x in reversed([x for x in table.spans if x.low < 600]):
+        below(phase, x.low, x.terms)
+    first = phase.at(T0)
+    out.append(("Cr2O3", Record(
+        "Holzheid-ONeill-1995", first.H(T0) / 1000, 2.0, first.S(T0), 1.5,
+        f"potential of oxygen 600 to 1800 K with Cr and O2 of this file, residual {digits(worst / 1000, 2)} kJ/mol; below, heat capacity of the JANAF set",
+        "galvanic cell within 0.3 kJ; its entropy is 4.6 J/K above calorimetry", [phase],
+    )))
+
+    # orthosilicic acid vapour: one mean heat capacity leads from S298 to the entropy measured at 1200 K
+    mean = (mpf("544.4") - mpf("347.78")) / log(mpf(1200) / mpf("298.15"))
+    out.append(("Si(OH)4", Record(
+        "Plyasunov-2011", mpf("-1340.68"), 3.0, mpf("347.78"), 4.0,
+        "102 measured pressures over SiO2, 424 to 1661 K; one mean heat capacity to S = 544.4 J/K at 1200 K",
+        "laboratories differ; stated interval 3.5 kJ", [Phase("gas", "g", [span(T0, 2000, [(0, mean)], T0, mpf(-1340680), mpf("347.78"))])],
+    )))
     return out
