@@ -11,7 +11,7 @@ from build import (
 from form import T0, Phase, Record, counts, digits, span
 
 US = "work of the United States Government, free of copyright there"
-FACTS = "published figures, typed from the paper with citation"
+FACTS = "published figures, retyped with citation"
 SOURCES = {
     "NASA-Glenn-2002": (
         "NASA Glenn 2002",
