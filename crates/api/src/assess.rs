@@ -162,7 +162,7 @@ impl Teller<'_> {
                         answer.equation = reaction.equation.text();
                         answer.short = short_equation(reaction);
                         answer.standard_turning_temperatures_k =
-                            reaction.turning(self.book, 0.0).iter().map(|c| c.at).collect();
+                            reaction.turning(self.book, 0.0, 0.0).iter().map(|c| c.at).collect();
                         answer.notes.clone_from(&reaction.notes);
                         answer.notes.extend(beside_note(self.book, reaction));
                     }

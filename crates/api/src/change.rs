@@ -54,7 +54,7 @@ pub(crate) fn change(book: &Book, request: &ChangeRequest) -> Result<Vec<Reactio
             n * ln(value_of(&t.species.text(), t.species.formula.text()))
         })
         .sum();
-    let crossings = joined.turning(book, ln_q);
+    let crossings = joined.turning(book, ln_q, 0.0);
     let range = joined.range_k();
     let mut at: Vec<f64> = Vec::new();
     for text in &request.at {

@@ -134,12 +134,22 @@ impl Bound {
     /// ln Q in a gas; NaN where the gas lacks a species.
     #[must_use]
     pub fn ln_q(&self, reaction: &Reaction, state: &[f64]) -> f64 {
+        self.sum(reaction, |i| ln(state[i]))
+    }
+
+    /// The same from the logarithms of the partial pressures.
+    #[must_use]
+    pub fn ln_q_of_logs(&self, reaction: &Reaction, logs: &[f64]) -> f64 {
+        self.sum(reaction, |i| logs[i])
+    }
+
+    fn sum(&self, reaction: &Reaction, log: impl Fn(usize) -> f64) -> f64 {
         self.supply
             .iter()
             .zip(&reaction.used)
             .map(|(s, u)| {
                 u.nu * match *s {
-                    Supply::Gas(i) => ln(state[i]),
+                    Supply::Gas(i) => log(i),
                     Supply::Fixed(a) => a,
                 }
             })
@@ -656,7 +666,11 @@ impl Case<'_> {
             let low = self.acts_above_k().map_or(cold, |a| a.max(cold));
             let mut marks = alloc::vec![low.min(hot), hot];
             marks.extend(
-                reaction.turning(self.ground.book, outcome.ln_q).iter().map(|c| c.at).filter(|t| *t > low && *t < hot),
+                reaction
+                    .turning(self.ground.book, outcome.ln_q, 0.0)
+                    .iter()
+                    .map(|c| c.at)
+                    .filter(|t| *t > low && *t < hot),
             );
             marks.sort_by(f64::total_cmp);
             let off = marks

@@ -10,7 +10,7 @@ use alloc::string::{String, ToString};
 use alloc::vec::Vec;
 use leeway_gas::humidity;
 use leeway_quantity::constants::{GAS_CONSTANT, KJ_PER_J};
-use leeway_quantity::math::{exp, exp10, log10};
+use leeway_quantity::math::{exp, exp10, ln, log10};
 use leeway_quantity::{Kind, Unit};
 use leeway_reactions::{Crossing, crossings};
 
@@ -68,7 +68,8 @@ pub struct Sweep {
     pub what: What,
     /// Values, ascending, internal unit.
     pub values: Vec<f64>,
-    states: Vec<Option<State>>,
+    /// Logarithms of the partial pressures at each value: a change costs a few products then.
+    logs: Vec<Option<State>>,
 }
 
 /// Lowest and highest pressure searched, bar: vacuum furnaces to pressure vessels.
@@ -163,11 +164,15 @@ pub fn sweeps(ground: &Ground, gas: &crate::fan::ZoneGas, at: &Situation) -> Vec
     list.push((What::Pressure, log_steps(PRESSURE_RANGE.0, PRESSURE_RANGE.1, 4)));
     list.into_iter()
         .map(|(what, values)| {
-            let states = values
+            let logs = values
                 .iter()
-                .map(|&v| gas.read(ground.book, ground.shift, &what.apply(at, v)).ok().map(|(s, _)| s))
+                .map(|&v| {
+                    gas.read(ground.book, ground.shift, &what.apply(at, v))
+                        .ok()
+                        .map(|(s, _)| s.into_iter().map(ln).collect())
+                })
                 .collect();
-            Sweep { what, values, states }
+            Sweep { what, values, logs }
         })
         .collect()
 }
@@ -178,12 +183,14 @@ impl Sweep {
     pub fn crossings(&self, case: &Case, outcome: &Outcome, at: &Situation, level_kj: f64) -> Vec<Crossing> {
         let reaction = case.reaction(&outcome.bound);
         let rt = GAS_CONSTANT * KJ_PER_J * outcome.place.t_k;
-        let dg = |state: &State| outcome.sum.dg_kj + rt * outcome.bound.ln_q(reaction, state) - level_kj;
-        let values: Vec<f64> = self.states.iter().map(|s| s.as_ref().map_or(f64::NAN, dg)).collect();
+        let dg = |ln_q: f64| outcome.sum.dg_kj + rt * ln_q - level_kj;
+        let bound = &outcome.bound;
+        let values: Vec<f64> =
+            self.logs.iter().map(|s| s.as_ref().map_or(f64::NAN, |s| dg(bound.ln_q_of_logs(reaction, s)))).collect();
         let f = |v: f64| {
             case.gas
                 .read(case.ground.book, case.ground.shift, &self.what.apply(at, v))
-                .map_or(f64::NAN, |(s, _)| dg(&s))
+                .map_or(f64::NAN, |(s, _)| dg(bound.ln_q(reaction, &s)))
         };
         crossings(&self.values, &values, f, None)
     }
@@ -191,8 +198,8 @@ impl Sweep {
     fn moves(&self, case: &Case, outcome: &Outcome) -> bool {
         let reaction = case.reaction(&outcome.bound);
         let mut first = None;
-        self.states.iter().flatten().any(|s| {
-            let q = outcome.bound.ln_q(reaction, s);
+        self.logs.iter().flatten().any(|s| {
+            let q = outcome.bound.ln_q_of_logs(reaction, s);
             if !q.is_finite() {
                 return false;
             }
@@ -235,7 +242,8 @@ pub fn levers(case: &Case, outcome: &Outcome, sweeps: &[Sweep]) -> Vec<Lever> {
         _ => 5,
     };
     let unit = case.zone.temperature.unit;
-    let turning = reaction.turning(case.ground.book, outcome.ln_q).iter().map(|c| unit.from_internal(c.at)).collect();
+    let turning =
+        reaction.turning(case.ground.book, outcome.ln_q, 0.0).iter().map(|c| unit.from_internal(c.at)).collect();
     let reading = if outcome.place.why == Why::Zone {
         case.zone.temperature.given
     } else {

@@ -84,19 +84,8 @@ fn at_level(case: &Case, outcome: &Outcome, sweep: Option<&Sweep>, at: &Situatio
     match sweep {
         Some(sweep) => sweep.crossings(case, outcome, at, signed_level).iter().map(|c| c.at).collect(),
         None => {
-            // Temperature: a walk outwards in cells, since the level is no multiple of RT.
             let reaction = case.reaction(&outcome.bound);
-            let Some((low, high)) = reaction.range_k() else { return Vec::new() };
-            let mut grid = Vec::new();
-            let mut t = low;
-            while t < high {
-                grid.push(t);
-                t += 10.0;
-            }
-            grid.push(high);
-            let f = |t: f64| case.dg_kj(reaction, t, outcome.ln_q) - signed_level;
-            let values: Vec<f64> = grid.iter().map(|&t| f(t)).collect();
-            leeway_reactions::crossings(&grid, &values, f, None).iter().map(|c| c.at).collect()
+            reaction.turning(case.ground.book, outcome.ln_q, signed_level).iter().map(|c| c.at).collect()
         }
     }
 }
@@ -151,7 +140,7 @@ fn faster(case: &Case, outcome: &Outcome) -> Option<Remedy> {
     let hot = case.zone.temperature.value.max(case.zone.leaving.as_ref()?.value);
     let target = beyond.into_iter().filter(|t| *t > outcome.place.t_k && *t <= hot).min_by(f64::total_cmp)?;
     let turn = reaction
-        .turning(case.ground.book, outcome.ln_q)
+        .turning(case.ground.book, outcome.ln_q, 0.0)
         .iter()
         .map(|c| c.at)
         .filter(|t| *t > outcome.place.t_k)

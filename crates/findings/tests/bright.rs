@@ -68,7 +68,6 @@ fn chromium_turns_where_the_published_values_say() {
     let found = assess(&book, &shift, &line(1050.0, -50.0));
     let outcome = found.findings[0].outcome.as_ref().expect("figures");
     let dew = outcome.levers.iter().find(|l| l.what.name() == "dew_point").expect("dew point");
-    println!("{outcome:#?}");
     assert!((dew.turning[0] + 21.9).abs() < 2.0, "{}", dew.turning[0]);
     assert_eq!(found.findings[0].standing, Standing::OnSide);
 }

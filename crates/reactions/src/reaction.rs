@@ -4,7 +4,7 @@
 //! conditions dG + RT ln Q with Q the product of activities to the power nu, pressures in bar.
 
 use crate::equation::Equation;
-use crate::turning::{Crossing, crossings};
+use crate::turning::{Crossing, Slopes, crossings};
 use alloc::string::{String, ToString};
 use alloc::vec::Vec;
 use leeway_quantity::constants::{GAS_CONSTANT, KJ_PER_J};
@@ -60,6 +60,8 @@ pub struct Reaction {
     constants: Option<(f64, f64)>,
     grid_k: Vec<f64>,
     dg0_kj: Vec<f64>,
+    /// Slopes of dG0 along the cells, kJ/K.
+    slopes: Slopes,
 }
 
 /// Widest cell of the temperature grid, K. Between kinks dG bends slowly: entropies change sign of their
@@ -98,8 +100,15 @@ impl Reaction {
                 candidates,
             });
         }
-        let mut reaction =
-            Self { equation: equation.clone(), used, notes, constants: None, grid_k: Vec::new(), dg0_kj: Vec::new() };
+        let mut reaction = Self {
+            equation: equation.clone(),
+            used,
+            notes,
+            constants: None,
+            grid_k: Vec::new(),
+            dg0_kj: Vec::new(),
+            slopes: Slopes::default(),
+        };
         reaction.lay_grid(book);
         Ok(reaction)
     }
@@ -116,6 +125,7 @@ impl Reaction {
             constants: Some((dh_kj, ds_j_per_k)),
             grid_k: alloc::vec![low, high],
             dg0_kj: alloc::vec![dg(low), dg(high)],
+            slopes: Slopes { start: alloc::vec![-ds_j_per_k * KJ_PER_J], end: alloc::vec![-ds_j_per_k * KJ_PER_J] },
         }
     }
 
@@ -152,17 +162,27 @@ impl Reaction {
     /// # Errors
     /// [`LookupError::OutOfRange`] where a species has no data at `t`.
     pub fn at(&self, book: &Book, t: f64) -> Result<Sum, LookupError> {
-        Ok(self.sum(t, &self.choose(book, t)?))
+        if let Some((dh_kj, ds_j_per_k)) = self.constants {
+            return Ok(Sum { dh_kj, ds_j_per_k, dg_kj: dh_kj - t * ds_j_per_k * KJ_PER_J });
+        }
+        let (mut h, mut s) = (0.0, 0.0);
+        for u in &self.used {
+            let values = book.choose(u.substance, &u.candidates, t)?.values;
+            h += u.nu * values.h_j;
+            s += u.nu * values.s_j_per_k;
+        }
+        Ok(Sum { dh_kj: h * KJ_PER_J, ds_j_per_k: s, dg_kj: (h - t * s) * KJ_PER_J })
     }
 
-    /// Temperatures at which dG0 + RT ln Q is zero for a fixed ln Q, over the range of the data; K.
+    /// Temperatures at which dG0 + RT ln Q takes the value `level_kj` (zero: where the change turns) for a
+    /// fixed ln Q, over the range of the data; K.
     #[must_use]
-    pub fn turning(&self, book: &Book, ln_q: f64) -> Vec<Crossing> {
+    pub fn turning(&self, book: &Book, ln_q: f64, level_kj: f64) -> Vec<Crossing> {
         let rq = GAS_CONSTANT * KJ_PER_J * ln_q;
-        let values: Vec<f64> = self.grid_k.iter().zip(&self.dg0_kj).map(|(t, g)| g + t * rq).collect();
-        let f = |t: f64| self.at(book, t).map_or(f64::NAN, |s| s.dg_kj + t * rq);
+        let values: Vec<f64> = self.grid_k.iter().zip(&self.dg0_kj).map(|(t, g)| g + t * rq - level_kj).collect();
+        let f = |t: f64| self.at(book, t).map_or(f64::NAN, |s| s.dg_kj + t * rq - level_kj);
         let mut slope = |t: f64| self.at(book, t).map_or(f64::NAN, |s| rq - s.ds_j_per_k * KJ_PER_J);
-        crossings(&self.grid_k, &values, f, Some(&mut slope))
+        crossings(&self.grid_k, &values, f, Some((&self.slopes, rq, &mut slope)))
     }
 
     /// Standard uncertainty of each substance's share in dG at `t`: index of `used`, contribution in kJ with
@@ -278,7 +298,12 @@ impl Reaction {
         grid.sort_by(f64::total_cmp);
         grid.dedup_by(|a, b| (*a - *b).abs() < 1e-9);
         let values: Vec<f64> = grid.iter().map(|&t| self.at(book, t).map_or(f64::NAN, |s| s.dg_kj)).collect();
+        let slope = |t: f64| self.at(book, t).map_or(f64::NAN, |s| -s.ds_j_per_k * KJ_PER_J);
+        let slopes = Slopes {
+            start: grid.windows(2).map(|w| slope(w[0] + 1e-9 * (w[1] - w[0]))).collect(),
+            end: grid.windows(2).map(|w| slope(w[1] - 1e-9 * (w[1] - w[0]))).collect(),
+        };
         // A gap in the data of a phase leaves points without a value; crossings skip them.
-        (self.grid_k, self.dg0_kj) = (grid, values);
+        (self.grid_k, self.dg0_kj, self.slopes) = (grid, values, slopes);
     }
 }

@@ -56,18 +56,28 @@ pub fn root(mut f: impl FnMut(f64) -> f64, mut a: f64, mut b: f64) -> f64 {
     if fa.abs() <= fb.abs() { a } else { b }
 }
 
+/// Slopes of a function just above the start and just below the end of each cell of a grid.
+#[derive(Debug, Clone, PartialEq, Default)]
+pub struct Slopes {
+    /// Just above the start of each cell.
+    pub start: Vec<f64>,
+    /// Just below the end of each cell.
+    pub end: Vec<f64>,
+}
+
 /// All crossings of `f` through the ascending `grid`, from the values `f` has there.
 ///
-/// `slope` gives the derivative: a pair of crossings inside one cell shows as an extremum that turns back
-/// towards zero, and is then looked for. Complete where `f` bends one way only within each cell, which the
+/// With slopes, a pair of crossings inside one cell shows as an extremum that turns back towards zero, and
+/// is then looked for by the derivative. Complete where `f` bends one way only within each cell, which the
 /// grid must provide (kinks on grid points).
 pub fn crossings(
     grid: &[f64],
     values: &[f64],
     mut f: impl FnMut(f64) -> f64,
-    mut slope: Option<&mut dyn FnMut(f64) -> f64>,
+    slopes: Option<(&Slopes, f64, &mut dyn FnMut(f64) -> f64)>,
 ) -> Vec<Crossing> {
     let mut found = Vec::new();
+    let mut slopes = slopes;
     for i in 1..grid.len() {
         let (a, b) = (grid[i - 1], grid[i]);
         let (fa, fb) = (values[i - 1], values[i]);
@@ -82,12 +92,12 @@ pub fn crossings(
             found.push(Crossing { at: root(&mut f, a, b), rises: fb > fa });
             continue;
         }
-        let Some(slope) = slope.as_mut() else { continue };
+        let Some((slopes, shift, slope)) = slopes.as_mut() else { continue };
         // Same sign at both ends: only a cell that heads for zero on entry and away on leaving can hold a pair.
-        let inset = 1e-9 * (b - a);
-        let (sa, sb) = (slope(a + inset), slope(b - inset));
+        let (sa, sb) = (slopes.start[i - 1] + *shift, slopes.end[i - 1] + *shift);
         if fa * sa < 0.0 && fb * sb > 0.0 {
-            let turn = root(&mut *slope, a + inset, b - inset);
+            let inset = 1e-9 * (b - a);
+            let turn = root(&mut **slope, a + inset, b - inset);
             let ft = f(turn);
             if ft != 0.0 && (ft < 0.0) != (fa < 0.0) {
                 found.push(Crossing { at: root(&mut f, a, turn), rises: ft > 0.0 });
