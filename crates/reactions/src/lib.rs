@@ -12,4 +12,4 @@ mod turning;
 
 pub use equation::{Equation, EquationError, Term};
 pub use reaction::{Reaction, ReactionError, Sum, Used};
-pub use turning::{Crossing, Slopes, crossings, root};
+pub use turning::{Bend, Crossing, Slopes, crossings, root};

@@ -4,7 +4,7 @@
 //! conditions dG + RT ln Q with Q the product of activities to the power nu, pressures in bar.
 
 use crate::equation::Equation;
-use crate::turning::{Crossing, Slopes, crossings};
+use crate::turning::{Bend, Crossing, Slopes, crossings};
 use alloc::string::{String, ToString};
 use alloc::vec::Vec;
 use leeway_quantity::constants::{GAS_CONSTANT, KJ_PER_J};
@@ -182,7 +182,7 @@ impl Reaction {
         let values: Vec<f64> = self.grid_k.iter().zip(&self.dg0_kj).map(|(t, g)| g + t * rq - level_kj).collect();
         let f = |t: f64| self.at(book, t).map_or(f64::NAN, |s| s.dg_kj + t * rq - level_kj);
         let mut slope = |t: f64| self.at(book, t).map_or(f64::NAN, |s| rq - s.ds_j_per_k * KJ_PER_J);
-        crossings(&self.grid_k, &values, f, Some((&self.slopes, rq, &mut slope)))
+        crossings(&self.grid_k, &values, f, Some(Bend { slopes: &self.slopes, shift: rq, slope: &mut slope }))
     }
 
     /// Standard uncertainty of each substance's share in dG at `t`: index of `used`, contribution in kJ with

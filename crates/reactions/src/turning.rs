@@ -65,19 +65,23 @@ pub struct Slopes {
     pub end: Vec<f64>,
 }
 
+/// How a function bends between the points of a grid.
+pub struct Bend<'a> {
+    /// Slopes at the ends of the cells, less `shift`.
+    pub slopes: &'a Slopes,
+    /// What the slopes are to be raised by.
+    pub shift: f64,
+    /// The derivative anywhere.
+    pub slope: &'a mut dyn FnMut(f64) -> f64,
+}
+
 /// All crossings of `f` through the ascending `grid`, from the values `f` has there.
 ///
 /// With slopes, a pair of crossings inside one cell shows as an extremum that turns back towards zero, and
 /// is then looked for by the derivative. Complete where `f` bends one way only within each cell, which the
 /// grid must provide (kinks on grid points).
-pub fn crossings(
-    grid: &[f64],
-    values: &[f64],
-    mut f: impl FnMut(f64) -> f64,
-    slopes: Option<(&Slopes, f64, &mut dyn FnMut(f64) -> f64)>,
-) -> Vec<Crossing> {
+pub fn crossings(grid: &[f64], values: &[f64], mut f: impl FnMut(f64) -> f64, mut bend: Option<Bend>) -> Vec<Crossing> {
     let mut found = Vec::new();
-    let mut slopes = slopes;
     for i in 1..grid.len() {
         let (a, b) = (grid[i - 1], grid[i]);
         let (fa, fb) = (values[i - 1], values[i]);
@@ -92,7 +96,7 @@ pub fn crossings(
             found.push(Crossing { at: root(&mut f, a, b), rises: fb > fa });
             continue;
         }
-        let Some((slopes, shift, slope)) = slopes.as_mut() else { continue };
+        let Some(Bend { slopes, shift, slope }) = bend.as_mut() else { continue };
         // Same sign at both ends: only a cell that heads for zero on entry and away on leaving can hold a pair.
         let (sa, sb) = (slopes.start[i - 1] + *shift, slopes.end[i - 1] + *shift);
         if fa * sa < 0.0 && fb * sb > 0.0 {
