@@ -37,6 +37,7 @@ pub(crate) fn change(book: &Book, request: &ChangeRequest) -> Result<Vec<Reactio
                 found: "one of dh and ds".to_string(),
                 expected: "both or neither".to_string(),
                 hints: Vec::new(),
+                more: Vec::new(),
             });
         }
     };

@@ -14,7 +14,7 @@ pub(crate) fn from_text(code: &str, at: String, place: String, message: String, 
     let (found, expected) = message.split_once(", expected ").map_or((message.clone(), String::new()), |(f, e)| {
         (f.rsplit_once("found ").map_or(f, |(_, f)| f).to_string(), e.to_string())
     });
-    Problem { code: code.to_string(), at, place, message, found, expected, hints }
+    Problem { code: code.to_string(), at, place, message, found, expected, hints, more: Vec::new() }
 }
 
 pub(crate) fn data(error: &DataError) -> Problem {
@@ -36,6 +36,7 @@ pub(crate) fn file(error: FileError) -> Problem {
         found: error.found,
         expected: error.expected,
         hints: error.hints,
+        more: error.more.into_iter().map(file).collect(),
     }
 }
 
@@ -120,7 +121,7 @@ pub(crate) fn lookup(book: &Book, error: &LookupError, at: String, place: String
         }
         _ => ("data", String::new(), String::new(), Vec::new()),
     };
-    Problem { code: code.to_string(), at, place, message: error.to_string(), found, expected, hints }
+    Problem { code: code.to_string(), at, place, message: error.to_string(), found, expected, hints, more: Vec::new() }
 }
 
 /// Substances of the same elements, at most four: what may have been meant.

@@ -546,4 +546,7 @@ pub struct Problem {
     pub expected: String,
     /// What to do; ready answers first.
     pub hints: Vec<String>,
+    /// Further problems of the same file, in its order.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub more: Vec<Problem>,
 }

@@ -34,6 +34,7 @@ pub(crate) fn read(path: &Path) -> Result<Vec<u8>, Problem> {
         found: e.to_string(),
         expected: "a line file that can be read".to_owned(),
         hints: Vec::new(),
+        more: Vec::new(),
     })?;
     Ok(bytes)
 }

@@ -33,17 +33,26 @@ fn main() -> ExitCode {
         _ => String::new(),
     };
     match run(&args.command, colour) {
-        Ok((text, code)) => write_out(&text, code),
-        Err(problems) => {
-            let mut paper = Paper::new(false);
-            for p in &problems {
-                paper.problem(&file, p);
-            }
-            // A closed standard error leaves nothing to say it to.
-            let _ = std::io::stderr().write_all(paper.into_text().as_bytes());
-            ExitCode::from(BAD_INPUT)
+        Ok(answer) => {
+            let code = write_out(&answer.text, answer.code);
+            if answer.refused.is_empty() { code } else { bad_input(&file, &answer.refused) }
+        }
+        Err(problems) => bad_input(&file, &problems),
+    }
+}
+
+/// Says on standard error what is wrong, where, and what mends it.
+fn bad_input(file: &str, problems: &[Problem]) -> ExitCode {
+    let mut paper = Paper::new(false);
+    for p in problems {
+        paper.problem(file, p);
+        for more in &p.more {
+            paper.problem(file, more);
         }
     }
+    // A closed standard error leaves nothing to say it to.
+    let _ = std::io::stderr().write_all(paper.into_text().as_bytes());
+    ExitCode::from(BAD_INPUT)
 }
 
 /// Writes to standard output; a reader that went away is no fault of ours.
@@ -53,7 +62,20 @@ fn write_out(text: &str, code: u8) -> ExitCode {
     ExitCode::from(code)
 }
 
-fn run(command: &Command, colour: bool) -> Result<(String, u8), Vec<Problem>> {
+/// What goes to standard output, and what of a line could not be taken: the rest of it is judged all the same.
+struct Answer {
+    text: String,
+    code: u8,
+    refused: Vec<Problem>,
+}
+
+impl Answer {
+    fn done(text: String) -> Self {
+        Self { text, code: 0, refused: Vec::new() }
+    }
+}
+
+fn run(command: &Command, colour: bool) -> Result<Answer, Vec<Problem>> {
     let one = |p: Problem| vec![p];
     let session = Session::new(leeway_dataset::TEXT).map_err(one)?;
     let mut paper = Paper::new(colour);
@@ -65,9 +87,6 @@ fn run(command: &Command, colour: bool) -> Result<(String, u8), Vec<Problem>> {
             }
             let assessment = session.assess(&text).map_err(one)?;
             let refused = refused(&assessment);
-            if !refused.is_empty() {
-                return Err(refused);
-            }
             known_name(zone.as_deref(), assessment.zones.iter().map(|z| z.name.as_str()), "zone").map_err(one)?;
             known_name(change.as_deref(), assessment.changes.iter().map(|c| c.name.as_str()), "change").map_err(one)?;
             let code =
@@ -77,10 +96,10 @@ fn run(command: &Command, colour: bool) -> Result<(String, u8), Vec<Problem>> {
                     0
                 };
             if *json {
-                return Ok((as_json(&assessment)?, code));
+                return Ok(Answer { text: as_json(&assessment)?, code, refused });
             }
             paper.assessment(&assessment, zone.as_deref(), change.as_deref());
-            Ok((paper.into_text(), code))
+            Ok(Answer { text: paper.into_text(), code, refused })
         }
         Command::Change { equation, at, activity, dh, ds, json } => {
             let request = ChangeRequest {
@@ -92,28 +111,28 @@ fn run(command: &Command, colour: bool) -> Result<(String, u8), Vec<Problem>> {
             };
             let reactions = session.change(&request).map_err(one)?;
             if *json {
-                return Ok((as_json(&reactions)?, 0));
+                return Ok(Answer::done(as_json(&reactions)?));
             }
             paper.reactions(&reactions);
-            Ok((paper.into_text(), 0))
+            Ok(Answer::done(paper.into_text()))
         }
         Command::Propose { line, json } => {
             let proposals = session.propose(&line_text(&session, line)?).map_err(one)?;
             if *json {
-                return Ok((as_json(&proposals)?, 0));
+                return Ok(Answer::done(as_json(&proposals)?));
             }
             paper.proposals(&proposals);
-            Ok((paper.into_text(), 0))
+            Ok(Answer::done(paper.into_text()))
         }
         Command::Substances { query, elements, json } => {
             let exact = query.as_deref().filter(|q| elements.is_none() && session.book().find(q.trim()).is_some());
             if let Some(formula) = exact {
                 let substance = session.substance(formula).map_err(one)?;
                 if *json {
-                    return Ok((as_json(&substance)?, 0));
+                    return Ok(Answer::done(as_json(&substance)?));
                 }
                 paper.substance(&substance);
-                return Ok((paper.into_text(), 0));
+                return Ok(Answer::done(paper.into_text()));
             }
             let asked = elements.as_deref().or(query.as_deref()).unwrap_or("");
             let rows = session.substances(asked);
@@ -122,10 +141,10 @@ fn run(command: &Command, colour: bool) -> Result<(String, u8), Vec<Problem>> {
                 return Err(session.substance(asked).err().into_iter().collect());
             }
             if *json {
-                return Ok((as_json(&rows)?, 0));
+                return Ok(Answer::done(as_json(&rows)?));
             }
             paper.rows(&rows);
-            Ok((paper.into_text(), 0))
+            Ok(Answer::done(paper.into_text()))
         }
     }
 }
@@ -159,6 +178,7 @@ fn known_name<'n>(
         found: asked.to_owned(),
         expected: all,
         hints: Vec::new(),
+        more: Vec::new(),
     })
 }
 
@@ -177,6 +197,7 @@ fn as_json<T: Serialize>(value: &T) -> Result<String, Vec<Problem>> {
                 found: String::new(),
                 expected: String::new(),
                 hints: Vec::new(),
+                more: Vec::new(),
             }]
         })
 }
