@@ -53,7 +53,8 @@ pub fn demo_lines_and_variants() -> Vec<(String, String)> {
         let variants = leeway_line::variants(&text).unwrap_or_else(|e| panic!("{name}: {e}"));
         all.push((name.clone(), text.clone()));
         for v in variants {
-            let varied = leeway_line::with_variant(&text, &v.name).unwrap_or_else(|e| panic!("{name}, {}: {e}", v.name));
+            let varied =
+                leeway_line::with_variant(&text, &v.name).unwrap_or_else(|e| panic!("{name}, {}: {e}", v.name));
             all.push((format!("{name}: {}", v.name), varied));
         }
     }
