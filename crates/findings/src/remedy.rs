@@ -8,7 +8,7 @@ use crate::judge::{Case, Outcome, Standing, Why};
 use crate::lever::{Sweep, What};
 use alloc::vec::Vec;
 use leeway_quantity::math::{ceil, exp10, floor, log10};
-use leeway_quantity::{Kind, Unit};
+use leeway_quantity::{Kind, Quantity, Unit};
 
 /// A change of one lever.
 #[derive(Debug, Clone, PartialEq)]
@@ -55,7 +55,7 @@ pub fn remedies(case: &Case, outcome: &Outcome, sweeps: &[Sweep]) -> Vec<Remedy>
     if !matches!(outcome.read.standing, Standing::OffSide | Standing::TooClose) || outcome.at_limit.is_some() {
         return Vec::new();
     }
-    let at = Situation { t_k: outcome.place.t_k, p_bar: case.zone.pressure.value, values: case.gas.intake.values() };
+    let at = at_reading(case, outcome);
     let mut list = Vec::new();
     for lever in &outcome.levers {
         let allowed = lever.what.allowed();
@@ -79,10 +79,10 @@ pub fn remedies(case: &Case, outcome: &Outcome, sweeps: &[Sweep]) -> Vec<Remedy>
 }
 
 /// Values of a lever at which the wish-signed dG equals `level` kJ.
-fn at_level(case: &Case, outcome: &Outcome, sweep: Option<&Sweep>, at: &Situation, level_kj: f64) -> Vec<f64> {
+fn at_level(case: &Case, outcome: &Outcome, sweep: Option<&Sweep>, level_kj: f64) -> Vec<f64> {
     let signed_level = outcome.sign * level_kj;
     match sweep {
-        Some(sweep) => sweep.crossings(case, outcome, at, signed_level).iter().map(|c| c.at).collect(),
+        Some(sweep) => sweep.crossings(case, outcome, &at_reading(case, outcome), signed_level).iter().map(|c| c.at).collect(),
         None => {
             let reaction = case.reaction(&outcome.bound);
             reaction.turning(case.ground.book, outcome.ln_q, signed_level).iter().map(|c| c.at).collect()
@@ -105,10 +105,10 @@ fn along(
         list.into_iter().filter(reachable).min_by(|a, b| (a - from).abs().total_cmp(&(b - from).abs()))
     };
     let off = outcome.leeway_kj() < 0.0;
-    let just = if off { nearest(at_level(case, outcome, sweep, at, 0.0))? } else { from };
+    let just = if off { nearest(at_level(case, outcome, sweep, 0.0))? } else { from };
     let mut level = case.ground.k * outcome.read.doubt.u_kj * 1.000_001;
     for _ in 0..8 {
-        let value = nearest(at_level(case, outcome, sweep, at, level))?;
+        let value = nearest(at_level(case, outcome, sweep, level))?;
         let up = value > from;
         let rounded = round_safe(unit.from_internal(value), unit, up);
         let internal = unit.to_internal(rounded);
@@ -123,8 +123,7 @@ fn along(
                 steps: (internal - from).abs() / usual_step(what, from),
             });
         }
-        let needed = case.ground.k * there.read.doubt.u_kj;
-        level = (level * 1.02).max(level + 1.02 * (needed - there.leeway_kj()).max(0.0));
+        level = raised(level, case, &there);
     }
     None
 }
@@ -132,28 +131,42 @@ fn along(
 /// Cooling faster, where a time past the turn is allowed: the place judged moves up the course.
 fn faster(case: &Case, outcome: &Outcome) -> Option<Remedy> {
     let Why::Allowed(seconds, rate, floor_k) = outcome.place.why else { return None };
-    let q = case.zone.rate.as_ref()?;
-    let reaction = case.reaction(&outcome.bound);
-    let level = case.ground.k * outcome.read.doubt.u_kj;
-    let beyond =
-        at_level(case, outcome, None, &Situation { t_k: outcome.place.t_k, p_bar: 0.0, values: Vec::new() }, level);
+    let q = case.zone.rate?;
     let hot = case.zone.temperature.value.max(case.zone.leaving.as_ref()?.value);
-    let target = beyond.into_iter().filter(|t| *t > outcome.place.t_k && *t <= hot).min_by(f64::total_cmp)?;
-    let turn = reaction
-        .turning(case.ground.book, outcome.ln_q, 0.0)
-        .iter()
-        .map(|c| c.at)
-        .filter(|t| *t > outcome.place.t_k)
-        .min_by(f64::total_cmp)
-        .unwrap_or(outcome.place.t_k);
     let needed = |t: f64| q.unit.from_internal((t - floor_k) / seconds);
-    let beyond_doubt = round_safe(needed(target), q.unit, true);
-    Some(Remedy {
-        what: What::Rate,
-        unit: q.unit,
-        from: q.given,
-        just_turns: needed(turn),
-        beyond_doubt,
-        steps: (q.unit.to_internal(beyond_doubt) - rate).abs() / usual_step(&What::Rate, rate),
-    })
+    let above = |level: f64| {
+        at_level(case, outcome, None, level).into_iter().filter(|t| *t > outcome.place.t_k && *t <= hot).min_by(f64::total_cmp)
+    };
+    let turn = if outcome.leeway_kj() < 0.0 { above(0.0)? } else { outcome.place.t_k };
+    let mut level = case.ground.k * outcome.read.doubt.u_kj;
+    for _ in 0..8 {
+        let beyond_doubt = round_safe(needed(above(level)?), q.unit, true);
+        let mut zone = case.zone.clone();
+        let value = q.unit.to_internal(beyond_doubt);
+        zone.rate = Some(Quantity { value, given: beyond_doubt, ..q });
+        let there = Case { zone: &zone, ..*case }.with_situation(&at_reading(case, outcome))?;
+        if there.read.standing == Standing::OnSide {
+            return Some(Remedy {
+                what: What::Rate,
+                unit: q.unit,
+                from: q.given,
+                just_turns: if turn == outcome.place.t_k { q.given } else { needed(turn) },
+                beyond_doubt,
+                steps: (value - rate) / usual_step(&What::Rate, rate),
+            });
+        }
+        level = raised(level, case, &there);
+    }
+    None
+}
+
+/// The next level to try where the doubt has grown on the way.
+fn raised(level: f64, case: &Case, there: &Outcome) -> f64 {
+    let needed = case.ground.k * there.read.doubt.u_kj;
+    (level * 1.02).max(level + 1.02 * (needed - there.leeway_kj()).max(0.0))
+}
+
+/// The place judged, as the instruments show it.
+fn at_reading(case: &Case, outcome: &Outcome) -> Situation {
+    Situation { t_k: outcome.place.t_k, p_bar: case.zone.pressure.value, values: case.gas.intake.values() }
 }
