@@ -20,7 +20,7 @@ use leeway_gas::reading::Surface;
 use leeway_gas::shift::Shift;
 use leeway_line::model::{Line, Wish, Zone as LineZone};
 use leeway_quantity::constants::{GAS_CONSTANT, KJ_PER_J};
-use leeway_substances::{Book, Class};
+use leeway_substances::{Book, Class, Species};
 
 /// How a standing is written.
 #[must_use]
@@ -64,9 +64,28 @@ pub(crate) fn assess(book: &Book, shift: &Shift, line: &Line) -> Assessment {
         zones: teller.zones(),
         changes: teller.changes(),
         cautions: leeway_findings::caution::cautions(line, &assessed).into_iter().map(cautions::words).collect(),
-        notes: line.notes.iter().map(|n| Note { at: n.at.clone(), text: n.text.clone() }).collect(),
+        notes: line
+            .notes
+            .iter()
+            .map(|n| Note { at: n.at.clone(), text: n.text.clone() })
+            .chain(charge_notes(book, line))
+            .collect(),
         findings,
     }
+}
+
+/// Members of the charge that the data do not hold: no change can count with them.
+fn charge_notes(book: &Book, line: &Line) -> Vec<Note> {
+    let unknown = |text: &str| Species::parse(text).is_ok_and(|s| book.find(s.formula.text()).is_none());
+    line.charge
+        .iter()
+        .enumerate()
+        .filter(|(_, m)| unknown(&m.substance))
+        .map(|(i, m)| Note {
+            at: alloc::format!("charge[{i}].substance"),
+            text: alloc::format!("{} is not in the data: it takes no part in any change", m.substance),
+        })
+        .collect()
 }
 
 fn pressures(gas: &ZoneGas, state: &[f64]) -> BTreeMap<String, f64> {
@@ -165,6 +184,19 @@ impl Teller<'_> {
                             reaction.turning(self.book, 0.0, 0.0).iter().map(|c| c.at).collect();
                         answer.notes.clone_from(&reaction.notes);
                         answer.notes.extend(beside_note(self.book, reaction));
+                        for (formula, _) in &change.activities {
+                            let bare = Species::parse(formula).map(|s| s.formula.text().to_string());
+                            let part = |b: &str| {
+                                reaction.used.iter().any(|u| u.formula == b)
+                                    || reaction.equation.terms.iter().any(|t| t.species.formula.text() == b)
+                            };
+                            if bare.is_ok_and(|b| !part(&b)) {
+                                answer.notes.push(alloc::format!(
+                                    "The activity of {formula} is not used: it is no part of {}",
+                                    answer.equation
+                                ));
+                            }
+                        }
                     }
                     Err(e) => answer.refused = Some(problem::change(self.book, e, i, &change.name)),
                 }

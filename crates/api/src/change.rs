@@ -59,8 +59,9 @@ pub(crate) fn change(book: &Book, request: &ChangeRequest) -> Result<Vec<Reactio
     let range = joined.range_k();
     let mut at: Vec<f64> = Vec::new();
     for text in &request.at {
-        let typed = entry::parse(text, Kind::Temperature, Unit::Celsius)
-            .map_err(|e| problem::from_text("number", text.clone(), String::from("at"), e.to_string(), e.hints()))?;
+        let typed = entry::parse(text, Kind::Temperature, Unit::Celsius).map_err(|e| {
+            problem::from_text("number", text.clone(), String::from("temperature"), e.to_string(), e.hints())
+        })?;
         at.push(typed.quantity.value);
     }
     if at.is_empty() {
@@ -179,14 +180,20 @@ fn activity(text: &str, equation: &Equation) -> Result<(String, f64), Problem> {
         .split_once('=')
         .ok_or_else(|| fail(alloc::format!("\u{201c}{text}\u{201d}"), "FORMULA=VALUE, for example H2O=0.01"))?;
     let name = name.trim();
-    let species = Species::parse(name).map_err(|e| fail(alloc::format!("\u{201c}{name}\u{201d}"), &e.to_string()))?;
+    let species = Species::parse(name).map_err(|_| {
+        let found =
+            if name.is_empty() { "nothing before the =".to_string() } else { alloc::format!("\u{201c}{name}\u{201d}") };
+        fail(found, &alloc::format!("a substance of {}", equation.text()))
+    })?;
     let known =
         equation.terms.iter().any(|t| t.species.text() == species.text() || t.species.formula.text() == species.text());
     if !known {
         return Err(fail(name.to_string(), &alloc::format!("a substance of {}", equation.text())));
     }
-    let value =
-        entry::number(value).map_err(|e| fail(alloc::format!("\u{201c}{}\u{201d}", value.trim()), &e.to_string()))?;
+    let value = entry::number(value).map_err(|e| {
+        let ready = e.hints().into_iter().map(|h| alloc::format!("{name}={h}")).collect();
+        problem::from_text("activity", text.to_string(), String::from("activity"), e.to_string(), ready)
+    })?;
     if !(value.is_finite() && value > 0.0) {
         return Err(fail(alloc::format!("{value}"), "an activity above 0, or a partial pressure in bar above 0"));
     }

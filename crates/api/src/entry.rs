@@ -6,7 +6,7 @@ use crate::{problem, words};
 use alloc::string::{String, ToString};
 use leeway_gas::humidity::{frost_point_k, saturation_pressure_bar};
 use leeway_gas::reading::Surface;
-use leeway_quantity::entry::{EntryError, Typed, number, parse, parse_any};
+use leeway_quantity::entry::{EntryError, Typed, number, parse_of};
 use leeway_quantity::{Kind, Unit};
 use serde_json::json;
 
@@ -31,7 +31,8 @@ pub(crate) fn read_entry(request: &EntryRequest) -> Result<Entry, Problem> {
         }
         other => {
             let message = alloc::format!("found the field \u{201c}{other}\u{201d}, expected a field of the line");
-            return Err(problem::from_text("entry.field", other.to_string(), String::new(), message, alloc::vec![]));
+            let place = "the field".to_string();
+            return Err(problem::from_text("entry.field", other.to_string(), place, message, alloc::vec![]));
         }
     };
     let default = unit.filter(|u| u.kind() == kind).or(unit.filter(|_| field == "gas")).unwrap_or(match kind {
@@ -43,25 +44,33 @@ pub(crate) fn read_entry(request: &EntryRequest) -> Result<Entry, Problem> {
         Kind::Fraction => Unit::Percent,
     });
     // A dew point may be typed as water in the gas, and a share as a partial pressure.
-    let typed = match field {
-        "dew_point" | "gas" => parse_any(&request.text, default),
-        _ => parse(&request.text, kind, default),
-    }
-    .map_err(|e| fail(&e))?;
-    let typed_kind = typed.quantity.unit.kind();
-    let gas_like = matches!(typed_kind, Kind::Fraction | Kind::Pressure);
-    if (field == "gas" && !gas_like) || (field == "dew_point" && typed_kind != Kind::Temperature && !gas_like) {
-        let expected = if field == "gas" { "%, ppm, ppb or a partial pressure" } else { "C, F, K, ppm or %" };
-        let message = alloc::format!("found the unit {}, expected {expected}", typed.quantity.unit.symbol());
-        return Err(problem::from_text("entry.unit", field.to_string(), String::new(), message, alloc::vec![]));
-    }
+    let kinds: &[Kind] = match field {
+        "dew_point" => &[Kind::Temperature, Kind::Fraction, Kind::Pressure],
+        "gas" => &[Kind::Fraction, Kind::Pressure],
+        _ => &[kind],
+    };
+    let typed = parse_of(&request.text, kinds, default).map_err(|e| fail(&e))?;
     if typed.bound && field != "gas" {
         let message = "found \u{201c}<\u{201d}, expected a reading; only a gas can stand at its detection limit";
         return Err(problem::from_text(
             "entry.bound",
             field.to_string(),
-            String::new(),
+            "character 1".to_string(),
             message.to_string(),
+            alloc::vec![],
+        ));
+    }
+    if field == "pressure" && typed.quantity.value <= 0.0 {
+        let message = alloc::format!(
+            "found {} {}, expected an absolute pressure above 0",
+            typed.quantity.given,
+            typed.quantity.unit.symbol()
+        );
+        return Err(problem::from_text(
+            "entry.value",
+            field.to_string(),
+            "the number".to_string(),
+            message,
             alloc::vec![],
         ));
     }
@@ -77,7 +86,13 @@ fn plain(field: &str, value: f64) -> Result<Entry, Problem> {
     };
     if let Some(expected) = expected {
         let message = alloc::format!("found {value}, expected {expected}");
-        return Err(problem::from_text("entry.value", field.to_string(), String::new(), message, alloc::vec![]));
+        return Err(problem::from_text(
+            "entry.value",
+            field.to_string(),
+            "the number".to_string(),
+            message,
+            alloc::vec![],
+        ));
     }
     Ok(Entry {
         quantity: json!(value),
@@ -114,7 +129,12 @@ fn quantity(request: &EntryRequest, typed: &Typed, asked: &str) -> Entry {
         _ if q.value < 273.15 => Surface::Ice,
         _ => Surface::Water,
     };
-    let mut read_back = words::value(q.given, q.unit);
+    // In full: all digits typed, never rounded.
+    let unit = words::unit_text(q.unit);
+    let mut read_back = words::number(q.given, 12);
+    if !unit.is_empty() {
+        read_back += &alloc::format!("{}{unit}", words::THIN);
+    }
     if is_dew {
         value["over"] = json!(if over == Surface::Ice { "ice" } else { "water" });
         read_back += if over == Surface::Ice { " frost point, over ice" } else { " dew point, over water" };

@@ -42,7 +42,7 @@ pub(crate) fn file(error: FileError) -> Problem {
 
 pub(crate) fn gas(error: &GasProblem, zone: usize, name: &str) -> Problem {
     let hints = match error {
-        GasProblem::Sum { balance: false, .. } => {
+        GasProblem::Sum { balance: false, percent, .. } if *percent < 100.0 => {
             alloc::vec!["Name the balance gas, or give the missing component".to_string()]
         }
         GasProblem::Sum { .. } => alloc::vec!["Check which channel reads dry and which wet, and the units".to_string()],
@@ -79,14 +79,18 @@ pub(crate) fn equation(error: &EquationError, at: String, place: String) -> Prob
         EquationError::Sides { .. } => ("equation.sides", alloc::vec!["Write it as 2 Cr + 1.5 O2 = Cr2O3".to_string()]),
         EquationError::Species { .. } => ("equation.formula", Vec::new()),
         EquationError::Coefficient { .. } => ("equation.coefficient", Vec::new()),
-        EquationError::Unbalanced { .. } => {
-            ("equation.unbalanced", alloc::vec!["Leave all coefficients out to have it balanced".to_string()])
+        EquationError::Unbalanced { balanced, .. } => {
+            let ready =
+                balanced.clone().unwrap_or_else(|| "Leave all coefficients out to have it balanced".to_string());
+            ("equation.unbalanced", alloc::vec![ready])
         }
         EquationError::Unbalanceable { .. } => ("equation.unbalanceable", Vec::new()),
         EquationError::Ambiguous { ways } => ("equation.ambiguous", ways.clone()),
         EquationError::Sum { .. } => ("equation.sum", alloc::vec!["Write a sum as 2*(A = B) - (C = D)".to_string()]),
         _ => ("equation.nothing", Vec::new()),
     };
+    // The whole equation names the place where it was typed alone; a long one is told apart by its head.
+    let at = if at.chars().count() > 120 { at.chars().take(119).chain(['\u{2026}']).collect() } else { at };
     let mut problem = from_text(code, at, place, error.to_string(), hints);
     match error {
         EquationError::Unbalanced { .. } => {
@@ -126,11 +130,11 @@ pub(crate) fn lookup(book: &Book, error: &LookupError, at: String, place: String
 
 /// Substances of the same elements, at most four: what may have been meant.
 fn near(book: &Book, formula: &str) -> Vec<String> {
-    let Ok(asked) = leeway_substances::Formula::parse(formula) else { return Vec::new() };
-    book.substances
-        .iter()
-        .filter(|s| s.formula.counts().keys().eq(asked.counts().keys()))
-        .map(|s| s.formula.text().to_string())
-        .take(4)
-        .collect()
+    let text = |s: &leeway_substances::Substance| s.formula.text().to_string();
+    let Ok(asked) = leeway_substances::Formula::parse(formula) else {
+        // Typed without capitals.
+        let small = formula.to_lowercase();
+        return book.substances.iter().map(text).filter(|f| f.to_lowercase() == small).take(4).collect();
+    };
+    book.substances.iter().filter(|s| s.formula.counts().keys().eq(asked.counts().keys())).map(text).take(4).collect()
 }

@@ -63,6 +63,16 @@ pub(crate) fn list(book: &Book, query: &str) -> Vec<SubstanceRow> {
 /// One substance with every record.
 pub(crate) fn one(book: &Book, formula: &str) -> Result<Substance, Problem> {
     let formula = formula.trim();
+    if formula.is_empty() {
+        let message = String::from("found nothing, expected a formula, for example Cr2O3");
+        return Err(problem::from_text(
+            "data.substance",
+            String::new(),
+            String::from("substance"),
+            message,
+            Vec::new(),
+        ));
+    }
     let index = book.find(formula).ok_or_else(|| {
         let error = LookupError::NoSubstance { formula: formula.to_string() };
         problem::lookup(book, &error, formula.to_string(), String::from("substance"))

@@ -16,15 +16,7 @@ pub(crate) fn read(path: &Path) -> Result<Vec<u8>, Problem> {
     let taken = if path.as_os_str() == "-" {
         std::io::stdin().lock().take(MOST).read_to_end(&mut bytes)
     } else {
-        std::fs::File::open(path).and_then(|f| {
-            let size = f.metadata().map_or(0, |m| m.len());
-            let n = f.take(MOST).read_to_end(&mut bytes)?;
-            if size > MOST {
-                // Tells the reader the true size without holding it.
-                bytes.resize(usize::try_from(MOST).unwrap_or(usize::MAX), 0);
-            }
-            Ok(n)
-        })
+        std::fs::File::open(path).and_then(|f| f.take(MOST).read_to_end(&mut bytes))
     };
     taken.map_err(|e| Problem {
         code: "file.read".to_owned(),

@@ -28,7 +28,7 @@ const UNBURNED: f64 = 1e-6;
 #[non_exhaustive]
 pub enum GasProblem {
     /// Parts add up to too much or too little.
-    #[error("found a sum of {percent:.1} % ({parts}), expected 97 to 103 %{}", if *.balance { ", or less with a balance gas" } else { "; name a balance gas if the rest was not analysed" })]
+    #[error("found a sum of {percent:.1} % ({parts}), expected 97 to 103 %{}", if *.balance { ", or less with a balance gas" } else if *.percent < 97.0 { "; name a balance gas if the rest was not analysed" } else { "" })]
     Sum {
         /// The sum, %.
         percent: f64,
@@ -69,7 +69,7 @@ pub enum GasProblem {
     },
     /// More water than pressure.
     #[error(
-        "found a dew point of {celsius:.1} C, which is {water_bar:.3} bar of water in {pressure_bar:.3} bar of gas; expected less water than gas"
+        "found a dew point of {celsius:.1} C, which is {water_bar:.3} bar of water in {pressure_bar:.3} bar of gas, expected less water than gas"
     )]
     AllWater {
         /// The dew point, C.

@@ -3,7 +3,7 @@
 //! Nothing is thrown away: unknown fields stay in the text and are reported; all problems of a file are
 //! gathered before it is refused, the first with the rest behind it.
 
-use crate::json::{Json, clip, line_of};
+use crate::json::{Json, TWICE, clip, line_of};
 use crate::model::{Activity, ActsAbove, Change, Line, Member, Note, Wish, Zone};
 use alloc::format;
 use alloc::string::{String, ToString};
@@ -12,6 +12,7 @@ use leeway_gas::reading::{Basis, Cell, Channel, DewPoint, GasReading, Surface};
 use leeway_quantity::constants::BAR_PER_ATM;
 use leeway_quantity::instrument;
 use leeway_quantity::{Kind, Quantity, Spread, Unit};
+use leeway_substances::Species;
 
 /// Version of the form this reader knows.
 pub const VERSION: f64 = 1.0;
@@ -65,13 +66,7 @@ fn error(code: &'static str, at: &str, place: String, found: String, expected: &
 pub fn decode(bytes: &[u8]) -> Result<(String, Vec<Note>), FileError> {
     let file = || String::from("the file");
     if bytes.len() > LARGEST {
-        let found = format!("{} bytes", bytes.len());
-        let mut e = error("file.large", "", file(), found, "a line file of at most 4 000 000 bytes");
-        e.hints.push("A record of readings is no line file".to_string());
-        return Err(e);
-    }
-    if bytes.is_empty() {
-        return Err(error("file.empty", "", file(), "an empty file".to_string(), "a line file, which begins with {"));
+        return Err(too_large());
     }
     let utf16 = bytes.starts_with(&[0xff, 0xfe])
         || bytes.starts_with(&[0xfe, 0xff])
@@ -89,6 +84,9 @@ pub fn decode(bytes: &[u8]) -> Result<(String, Vec<Note>), FileError> {
             at: String::new(),
             text: "A byte order mark at the head of the file is left out".to_string(),
         });
+    }
+    if body.iter().all(u8::is_ascii_whitespace) {
+        return Err(error("file.empty", "", file(), "an empty file".to_string(), "a line file, which begins with {"));
     }
     if body.contains(&0) {
         return Err(error("file.binary", "", file(), "a binary file".to_string(), "a line file, which is text"));
@@ -112,41 +110,95 @@ pub fn decode(bytes: &[u8]) -> Result<(String, Vec<Note>), FileError> {
 /// a key twice.
 pub(crate) fn tree(text: &str) -> Result<Json, FileError> {
     if text.len() > LARGEST {
-        return Err(error(
-            "file.large",
-            "",
-            "the file".to_string(),
-            format!("{} bytes", text.len()),
-            "a line file of at most 4 000 000 bytes",
-        ));
+        return Err(too_large());
     }
-    serde_json::from_str::<Json>(text).map_err(|e| {
-        let (line, column) = (e.line(), e.column());
-        let place = format!("line {line}, column {column}");
-        let said = e.to_string();
-        let said = said.split(" at line").next().unwrap_or("").to_string();
-        let (found, expected) = if e.is_eof() {
-            (format!("the end of the file in line {line}"), "the rest of the line file: it is cut off")
-        } else if said.contains("recursion") {
-            (format!("brackets nested more than 128 deep in line {line}"), "a line file, which nests 8 deep")
-        } else if said.contains("stands twice") {
-            (format!("{said} in line {line}"), "each key once in its object")
+    if !text.trim_start().starts_with(['{', '[']) && serde_json::from_str::<Json>(text).is_err() {
+        let line = text.len() - text.trim_start().len();
+        let line = text[..line].matches('\n').count() + 1;
+        let head = text.trim_start().lines().next().unwrap_or("");
+        let found = if head.is_empty() {
+            "an empty file".to_string()
         } else {
-            let near: String = text
-                .lines()
-                .nth(line.saturating_sub(1))
-                .unwrap_or("")
-                .chars()
-                .skip(column.saturating_sub(8))
-                .take(16)
-                .collect();
-            (
-                format!("\u{201c}{}\u{201d} in line {line}, column {column} ({said})", clip(near.trim())),
-                "JSON: numbers without quotes, a point for decimals, commas between members",
-            )
+            format!("text that begins with {}", quoted(head))
         };
-        error("file.json", "", place, found, expected)
-    })
+        let mut e = error("file.json", "", format!("line {line}"), found, "a line file, which begins with {");
+        if head.contains([';', '\t']) {
+            e.hints.push("A table of readings is no line file".to_string());
+        }
+        return Err(e);
+    }
+    serde_json::from_str::<Json>(text).map_err(|e| syntax(text, &e))
+}
+
+fn too_large() -> FileError {
+    let found = "a file of more than 4 MB".to_string();
+    let mut e = error("file.large", "", "the file".to_string(), found, "a line file of at most 4 MB");
+    e.hints.push("A record of readings is no line file".to_string());
+    e
+}
+
+/// What is wrong with a text that is not JSON, and the mend where the fault is a common one.
+fn syntax(text: &str, e: &serde_json::Error) -> FileError {
+    let (line, column) = (e.line(), e.column());
+    let place = format!("line {line}, column {column}");
+    let said = e.to_string();
+    let said = said.split(" at line").next().unwrap_or("");
+    let row: Vec<char> = text.lines().nth(line.saturating_sub(1)).unwrap_or("").chars().collect();
+    let here: String = row.iter().skip(column.saturating_sub(1)).collect();
+    let around: String = row.iter().skip(column.saturating_sub(10)).take(20).collect();
+    let before = row.get(..column.saturating_sub(1)).unwrap_or(&row).iter().collect::<String>();
+    let before = before.trim_end();
+    let found = format!("{} in line {line}, column {column}", quoted(around.trim()));
+    let one = |found: String, expected: &str, hint: &str| {
+        let mut e = error("file.json", "", place.clone(), found, expected);
+        if !hint.is_empty() {
+            e.hints.push(hint.to_string());
+        }
+        e
+    };
+    if e.is_eof() {
+        let found = format!("the end of the file in line {line}");
+        return one(found, "the rest of the line file: it is cut off", "Copy the file again from where it was saved");
+    }
+    if said.contains("recursion") {
+        let found = format!("brackets nested more than 128 deep in line {line}");
+        return one(found, "a line file, which nests 8 deep", "");
+    }
+    if said.contains(TWICE) {
+        return one(format!("{said} in line {line}"), "each key once in its object", "Take one of the two out");
+    }
+    if said.contains("number out of range") {
+        return one(found, "a number below 10^308", "");
+    }
+    if here.starts_with("NaN") || here.starts_with("Inf") || here.starts_with("-Inf") {
+        return one(found, "a number", "Leave the reading out where there is none");
+    }
+    if here.starts_with("//") || here.starts_with("/*") || here.starts_with('#') {
+        return one(found, "no remarks in a line file", "Put it into the field \u{201c}about\u{201d}");
+    }
+    if here.starts_with('\'') {
+        return one(found, "a text in double quotes", "Write \" for '");
+    }
+    if here.starts_with('+') {
+        return one(found, "a number without a plus", "Take the + out");
+    }
+    if here.starts_with(|c: char| c.is_ascii_digit()) && said.contains("key must be") {
+        return one(found, "a number with a decimal point", "Write 1.02 for 1,02");
+    }
+    if said.contains("trailing comma") {
+        return one(found, "another member after the comma", "Take the last comma out");
+    }
+    if said.contains("trailing characters") {
+        return one(found, "nothing after the end of the line", "One file is one line: save the rest apart");
+    }
+    if said.contains("expected `,`") && !before.ends_with(',') {
+        return one(found, "a comma before it", "");
+    }
+    one(found, "JSON: texts in double quotes, numbers without, commas between members", "")
+}
+
+fn quoted(text: &str) -> String {
+    format!("\u{201c}{}\u{201d}", clip(text))
 }
 
 struct Reader<'a> {
@@ -189,6 +241,7 @@ const TOP: [&str; 13] = [
     "variants",
     "view",
 ];
+const ANALYSIS: &str = "shares in { } by formula, such as {\"H2\": {\"value\": 75, \"unit\": \"%\"}}";
 const QUANTITY: [&str; 6] = ["value", "unit", "tolerance", "tolerance_kind", "instrument", "source"];
 
 impl Reader<'_> {
@@ -203,7 +256,7 @@ impl Reader<'_> {
             let mut word = format!("{noun} {}", i + 1);
             if let Some(Json::List(list)) = self.root.get(key) {
                 let name = list.get(i).and_then(|o| o.get("name").or_else(|| o.get("substance"))).and_then(Json::text);
-                if let Some(name) = name {
+                if let Some(name) = name.filter(|n| !n.trim().is_empty()) {
                     word += &format!(", {}", clip(name));
                 }
             }
@@ -222,17 +275,19 @@ impl Reader<'_> {
     fn wrong_hint(&mut self, code: &'static str, at: &str, found: String, expected: &str, hints: Vec<String>) {
         if self.problems.len() < MOST_PROBLEMS {
             let mut e = error(code, at, self.place(at), found, expected);
-            e.message = format!("{at}: {}", e.message);
+            if !at.is_empty() {
+                e.message = format!("{at}: {}", e.message);
+            }
             e.hints = hints;
             self.problems.push(e);
         }
     }
 
-    fn object<'j>(&mut self, json: &'j Json, at: &str) -> Option<&'j [(String, Json)]> {
+    fn object<'j>(&mut self, json: &'j Json, at: &str, expected: &str) -> Option<&'j [(String, Json)]> {
         match json {
             Json::Object(members) => Some(members),
             other => {
-                self.wrong("line.type", at, other.describe(), "an object in { }");
+                self.wrong("line.type", at, other.describe(), expected);
                 None
             }
         }
@@ -256,8 +311,8 @@ impl Reader<'_> {
                 continue;
             }
             let path = if at.is_empty() { key.clone() } else { format!("{at}.{key}") };
-            let near = known.iter().min_by_key(|k| distance(k, key)).filter(|k| distance(k, key) <= 2);
-            let hint = near.map_or_else(String::new, |k| format!(" Is \u{201c}{k}\u{201d} meant?"));
+            let hint = nearest(key, known.iter().copied())
+                .map_or_else(String::new, |k| format!(" Is \u{201c}{k}\u{201d} meant?"));
             self.notes.push(Note {
                 at: path,
                 text: format!("The field \u{201c}{}\u{201d} is not known: kept, not used.{hint}", clip(key)),
@@ -306,7 +361,11 @@ impl Reader<'_> {
     /// A quantity of one of the kinds, with its tolerance.
     fn quantity(&mut self, json: Option<&Json>, at: &str, kinds: &[Kind], more: &[&str]) -> Option<Quantity> {
         let json = json?;
-        let members = self.object(json, at)?;
+        let Json::Object(members) = json else {
+            let (expected, hints) = as_quantity(json, kinds);
+            self.wrong_hint("line.type", at, json.describe(), &expected, hints);
+            return None;
+        };
         let known: Vec<&str> = QUANTITY.iter().chain(more).copied().collect();
         self.known(members, &known, at);
         let units: Vec<&str> = Unit::ALL.iter().filter(|u| kinds.contains(&u.kind())).map(|u| u.symbol()).collect();
@@ -316,7 +375,8 @@ impl Reader<'_> {
             Some(Json::Text(t)) => match leeway_quantity::entry::unit(t).filter(|u| kinds.contains(&u.kind())) {
                 Some(unit) => Some(unit),
                 None => {
-                    self.wrong("line.unit", &unit_at, format!("\u{201c}{}\u{201d}", clip(t)), &wanted);
+                    let hints = unit_hints(json, t, kinds, at);
+                    self.wrong_hint("line.unit", &unit_at, quoted(t), &wanted, hints);
                     None
                 }
             },
@@ -333,7 +393,9 @@ impl Reader<'_> {
         let value = match json.get("value") {
             Some(Json::Number(n)) => Some(*n),
             Some(other) => {
-                self.wrong("line.number", &value_at, other.describe(), "a number without quotes");
+                let ready = other.text().and_then(|t| leeway_quantity::entry::number(t).ok());
+                let hints = ready.map(|n| format!("\"value\": {n}")).into_iter().collect();
+                self.wrong_hint("line.number", &value_at, other.describe(), "a number without quotes", hints);
                 None
             }
             None => {
@@ -374,12 +436,7 @@ impl Reader<'_> {
             let at = format!("{at}.instrument");
             let Some(name) = self.text_of(Some(json), &at, true) else { return Some(quantity) };
             if quantity.unit.kind() != Kind::Temperature {
-                self.wrong(
-                    "line.instrument",
-                    &at,
-                    format!("\u{201c}{}\u{201d}", clip(&name)),
-                    "an instrument for a temperature only",
-                );
+                self.wrong("line.instrument", &at, quoted(&name), "an instrument for a temperature only");
                 return Some(quantity);
             }
             return match instrument::limits_k(&name, quantity.value) {
@@ -422,7 +479,7 @@ impl Reader<'_> {
 
     fn line(&mut self) -> Option<Line> {
         let root = self.root;
-        let members = self.object(root, "")?;
+        let members = self.object(root, "", "a line file: one object in { }")?;
         self.known(members, &TOP, "");
         match root.get("leeway") {
             Some(Json::Number(n)) if *n == VERSION => {}
@@ -451,7 +508,13 @@ impl Reader<'_> {
         let pressure = self.pressure(root.get("pressure"), "pressure");
         let charge = self.charge(root.get("charge"));
         let zones = self.zones(root.get("zones"), pressure);
-        let names: Vec<String> = zones.iter().map(|z| z.name.clone()).collect();
+        // From the file, not from what was taken: a zone with a fault of its own is there all the same.
+        let names: Vec<String> = match root.get("zones") {
+            Some(Json::List(list)) => {
+                list.iter().map(|z| z.get("name").and_then(Json::text).unwrap_or("").to_string()).collect()
+            }
+            _ => Vec::new(),
+        };
         let changes = self.changes(root.get("changes"), &names);
         self.variants_field(root.get("variants"));
         Some(Line { name, invented, coverage_factor, charge, zones, changes, notes: core::mem::take(&mut self.notes) })
@@ -476,7 +539,8 @@ impl Reader<'_> {
         let mut sum = 0.0;
         for (i, member) in self.list(json, "charge").iter().enumerate() {
             let at = format!("charge[{i}]");
-            let Some(members) = self.object(member, &at) else { continue };
+            let expected = "a member in { } with its substance and share_wt";
+            let Some(members) = self.object(member, &at, expected) else { continue };
             self.known(
                 members,
                 &["substance", "share_wt", "activity", "activity_coefficient", "doubt_factor", "source"],
@@ -485,6 +549,7 @@ impl Reader<'_> {
             let Some(substance) = self.text_of(member.get("substance"), &format!("{at}.substance"), true) else {
                 continue;
             };
+            self.formula(&substance, &format!("{at}.substance"));
             let share_at = format!("{at}.share_wt");
             let share_wt = match member.get("share_wt") {
                 Some(Json::Number(n)) => match Quantity::new(*n, Unit::Percent) {
@@ -509,6 +574,16 @@ impl Reader<'_> {
             );
         }
         charge
+    }
+
+    /// Notes a name that is no formula: a trade name or a sum such as loss on ignition may stand in a charge.
+    fn formula(&mut self, name: &str, at: &str) {
+        if let Err(e) = Species::parse(name) {
+            self.notes.push(Note {
+                at: at.to_string(),
+                text: format!("{} is no formula ({e}): it takes no part in any change", quoted(name)),
+            });
+        }
     }
 
     /// Activity or activity coefficient of a member of the charge, or of a change's own list.
@@ -550,7 +625,9 @@ impl Reader<'_> {
         let mut without_pressure = false;
         for (i, zone) in list.iter().enumerate() {
             let at = format!("zones[{i}]");
-            let Some(members) = self.object(zone, &at) else { continue };
+            let Some(members) = self.object(zone, &at, "a zone in { } with its name, temperature and gas") else {
+                continue;
+            };
             self.known(members, &["name", "temperature", "leaving", "rate", "pressure", "gas", "about"], &at);
             let name = self.text_of(zone.get("name"), &format!("{at}.name"), true);
             if let Some(name) = &name
@@ -565,7 +642,12 @@ impl Reader<'_> {
             }
             let temperature_at = format!("{at}.temperature");
             if zone.get("temperature").is_none() {
-                self.wrong("line.missing", &temperature_at, "no temperature".to_string(), "the zone's temperature");
+                self.wrong(
+                    "line.missing",
+                    &temperature_at,
+                    "no temperature".to_string(),
+                    "the zone's temperature, such as {\"value\": 950, \"unit\": \"C\"}",
+                );
             }
             let temperature = self.quantity(zone.get("temperature"), &temperature_at, &[Kind::Temperature], &[]);
             let leaving = self.quantity(zone.get("leaving"), &format!("{at}.leaving"), &[Kind::Temperature], &[]);
@@ -603,13 +685,15 @@ impl Reader<'_> {
     fn gas(&mut self, json: Option<&Json>, at: &str) -> GasReading {
         let mut gas = GasReading::default();
         let Some(json) = json else { return gas };
-        let Some(members) = self.object(json, at) else { return gas };
+        let Some(members) = self.object(json, at, "a gas in { } with its analysis, balance or dew_point") else {
+            return gas;
+        };
         self.known(members, &["basis", "analysis", "balance", "dew_point", "oxygen_cell"], at);
         gas.basis = self.basis(json.get("basis"), &format!("{at}.basis"));
         gas.balance = self.text_of(json.get("balance"), &format!("{at}.balance"), false);
         if let Some(analysis) = json.get("analysis") {
             let at = format!("{at}.analysis");
-            for (formula, channel) in self.object(analysis, &at).unwrap_or(&[]) {
+            for (formula, channel) in self.object(analysis, &at, ANALYSIS).unwrap_or(&[]) {
                 let at = format!("{at}.{formula}");
                 let Some(quantity) =
                     self.quantity(Some(channel), &at, &[Kind::Fraction, Kind::Pressure], &["basis", "bound"])
@@ -670,7 +754,8 @@ impl Reader<'_> {
         let mut changes: Vec<Change> = Vec::new();
         for (i, change) in self.list(json, "changes").iter().enumerate() {
             let at = format!("changes[{i}]");
-            let Some(members) = self.object(change, &at) else { continue };
+            let expected = "a change in { } with its name, equation and wish";
+            let Some(members) = self.object(change, &at, expected) else { continue };
             self.known(
                 members,
                 &["name", "equation", "wish", "zones", "activities", "acts_above", "allowed", "tolerated", "about"],
@@ -717,8 +802,20 @@ impl Reader<'_> {
                     match zone.text().and_then(|t| zones.iter().position(|z| z == t)) {
                         Some(index) => indices.push(index),
                         None => {
-                            let expected = format!("a zone of the line: {}", zones.join(", "));
-                            self.wrong("line.zone", &format!("{zones_at}[{j}]"), zone.describe(), &expected);
+                            let expected = if zones.is_empty() {
+                                "no zone: the line has none yet".to_string()
+                            } else {
+                                format!("a zone of the line: {}", zones.join(", "))
+                            };
+                            let hints = zone.text().and_then(|t| nearest(t, zones.iter().map(String::as_str)));
+                            let hints = hints.map(|z| format!("\"{z}\"")).into_iter().collect();
+                            self.wrong_hint(
+                                "line.zone",
+                                &format!("{zones_at}[{j}]"),
+                                zone.describe(),
+                                &expected,
+                                hints,
+                            );
                         }
                     }
                 }
@@ -727,7 +824,9 @@ impl Reader<'_> {
             let mut activities = Vec::new();
             if let Some(given) = change.get("activities") {
                 let at = format!("{at}.activities");
-                for (formula, value) in self.object(given, &at).unwrap_or(&[]) {
+                for (formula, value) in
+                    self.object(given, &at, "activities in { } by formula, such as {\"Cr\": 0.25}").unwrap_or(&[])
+                {
                     let at = format!("{at}.{formula}");
                     let taken = match value {
                         Json::Number(n) if *n > 0.0 && n.is_finite() => {
@@ -747,6 +846,7 @@ impl Reader<'_> {
                             None
                         }
                     };
+                    self.formula(formula, &at);
                     activities.extend(taken.map(|a| (formula.clone(), a)));
                 }
             }
@@ -783,12 +883,55 @@ impl Reader<'_> {
     fn variants_field(&mut self, json: Option<&Json>) {
         for (i, variant) in self.list(json, "variants").iter().enumerate() {
             let at = format!("variants[{i}]");
-            let Some(members) = self.object(variant, &at) else { continue };
+            let Some(members) = self.object(variant, &at, "a variant in { } with its name and patch") else { continue };
             self.known(members, &["name", "about", "patch"], &at);
             self.text_of(variant.get("name"), &format!("{at}.name"), true);
             self.list(variant.get("patch"), &format!("{at}.patch"));
         }
     }
+}
+
+/// The name nearest to what was typed, where it is near enough to have been meant.
+fn nearest<'n>(typed: &str, names: impl Iterator<Item = &'n str>) -> Option<&'n str> {
+    let near = names.map(|n| (distance(n, typed), n)).min_by_key(|(d, _)| *d)?;
+    (near.0 <= 2).then_some(near.1)
+}
+
+/// A value that should have been a quantity: what is expected, and the quantity it may stand for.
+fn as_quantity(json: &Json, kinds: &[Kind]) -> (String, Vec<String>) {
+    let usual = match kinds.first() {
+        Some(Kind::Temperature) => (950.0, Unit::Celsius),
+        Some(Kind::Pressure) => (1.02, Unit::Bar),
+        Some(Kind::Voltage) => (1136.0, Unit::Millivolt),
+        Some(Kind::Rate) => (38.0, Unit::KelvinPerSecond),
+        Some(Kind::Time) => (8.0, Unit::Second),
+        _ => (75.0, Unit::Percent),
+    };
+    let written = |value: f64, unit: Unit| format!("{{\"value\": {value}, \"unit\": \"{}\"}}", unit.symbol());
+    let ready = json
+        .text()
+        .and_then(|t| leeway_quantity::entry::parse_any(t, usual.1).ok())
+        .filter(|t| kinds.contains(&t.quantity.unit.kind()) && t.unit_typed)
+        .map(|t| written(t.quantity.given, t.quantity.unit));
+    (format!("a quantity such as {}", written(usual.0, usual.1)), ready.into_iter().collect())
+}
+
+/// Ready answers for a unit that does not fit: the absolute pressure for a gauge pressure, the place for water
+/// given as a share.
+fn unit_hints(json: &Json, unit: &str, kinds: &[Kind], at: &str) -> Vec<String> {
+    let Some(Json::Number(value)) = json.get("value") else { return Vec::new() };
+    if kinds.contains(&Kind::Pressure)
+        && let Err(e) = leeway_quantity::entry::parse_any(&format!("{value} {unit}"), Unit::Bar)
+    {
+        return e.hints();
+    }
+    let share = leeway_quantity::entry::unit(unit).is_some_and(|u| matches!(u.kind(), Kind::Fraction | Kind::Pressure));
+    if at.ends_with("dew_point") && share {
+        return alloc::vec![format!(
+            "Water as a share stands in the analysis: \"H2O\": {{\"value\": {value}, \"unit\": \"{unit}\"}}"
+        )];
+    }
+    Vec::new()
 }
 
 /// Number of single-letter edits between two words, for hints.

@@ -57,9 +57,13 @@ impl Json {
     }
 }
 
+/// Marks the refusal of a key that its object holds already.
+pub(crate) const TWICE: &str = "a second time";
+
 /// At most 40 characters of a text.
 pub(crate) fn clip(text: &str) -> String {
-    let mut piece: String = text.chars().take(40).collect();
+    // A control character would spoil the terminal it is printed on.
+    let mut piece: String = text.chars().take(40).map(|c| if c.is_control() { '\u{fffd}' } else { c }).collect();
     if text.chars().count() > 40 {
         piece.push('\u{2026}');
     }
@@ -111,7 +115,7 @@ impl<'de> Visitor<'de> for Reader {
         let mut members: Vec<(String, Json)> = Vec::new();
         while let Some(key) = map.next_key::<String>()? {
             if members.iter().any(|(k, _)| *k == key) {
-                return Err(de::Error::custom(format!("the key \u{201c}{}\u{201d} stands twice", clip(&key))));
+                return Err(de::Error::custom(format!("the key \u{201c}{}\u{201d} {TWICE}", clip(&key))));
             }
             let value = map.next_value()?;
             members.push((key, value));

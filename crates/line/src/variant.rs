@@ -54,7 +54,8 @@ pub fn with_variant(text: &str, name: &str) -> Result<String, FileError> {
     };
     for (i, step) in steps.iter().enumerate() {
         apply(&mut root, step)
-            .map_err(|(found, expected)| fail(&format!("variants[{index}].patch[{i}]"), found, expected))?;
+            .map_err(|(found, expected)| fail(&format!("variants[{index}].patch[{i}]"), found, expected))
+            .map_err(|e| FileError { place: format!("variant {}, {name}, step {}", index + 1, i + 1), ..e })?;
     }
     serde_json::to_string_pretty(&root).map_err(|e| fail("variants", e.to_string(), "a line that can be written"))
 }

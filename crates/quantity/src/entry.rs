@@ -174,7 +174,7 @@ pub fn number(text: &str) -> Result<f64, EntryError> {
     let (value, used) = take_number(text, 1)?;
     if used < text.len() {
         return Err(EntryError::new(
-            format!("\u{201c}{}\u{201d} after the number", clip(&text[used..])),
+            format!("\u{201c}{}\u{201d} after the number", clip(text[used..].trim())),
             "nothing after it",
             text[..used].chars().count() + 1,
         ));
@@ -187,16 +187,7 @@ pub fn number(text: &str) -> Result<f64, EntryError> {
 /// # Errors
 /// [`EntryError`] where it does not read, has a unit of another kind, or cannot be (below 0 K, for example).
 pub fn parse(text: &str, kind: Kind, default_unit: Unit) -> Result<Typed, EntryError> {
-    let typed = parse_any(text, default_unit)?;
-    if typed.quantity.unit.kind() == kind {
-        return Ok(typed);
-    }
-    let units: Vec<&str> = Unit::ALL.iter().filter(|u| u.kind() == kind).map(|u| u.symbol()).collect();
-    Err(EntryError::new(
-        format!("the unit {}", typed.quantity.unit.symbol()),
-        format!("one of {}", units.join(", ")),
-        1,
-    ))
+    parse_of(text, &[kind], default_unit)
 }
 
 /// Reads a quantity of any kind; a number without a unit is in `default_unit`.
@@ -204,6 +195,15 @@ pub fn parse(text: &str, kind: Kind, default_unit: Unit) -> Result<Typed, EntryE
 /// # Errors
 /// [`EntryError`] as for [`parse`].
 pub fn parse_any(text: &str, default_unit: Unit) -> Result<Typed, EntryError> {
+    use Kind::{Fraction, Pressure, Rate, Temperature, Time, Voltage};
+    parse_of(text, &[Temperature, Pressure, Fraction, Voltage, Rate, Time], default_unit)
+}
+
+/// Reads a quantity of one of several kinds; a number without a unit is in `default_unit`.
+///
+/// # Errors
+/// [`EntryError`] as for [`parse`].
+pub fn parse_of(text: &str, kinds: &[Kind], default_unit: Unit) -> Result<Typed, EntryError> {
     let whole = text;
     let length = whole.chars().count();
     if length > LONGEST {
@@ -223,7 +223,13 @@ pub fn parse_any(text: &str, default_unit: Unit) -> Result<Typed, EntryError> {
         bound = true;
         rest = after.trim_start();
     }
-    let (value, used) = take_number(rest, column(rest))?;
+    let (value, used) = take_number(rest, column(rest)).map_err(|mut e| {
+        if bound {
+            e.hints.iter_mut().for_each(|h| h.insert(0, '<'));
+        }
+        e
+    })?;
+    let number_end = whole.trim().len() - rest.len() + used;
     rest = rest[used..].trim_start();
     // The tolerance may stand before or after the unit.
     let (before, tolerance) = split_tolerance(rest);
@@ -232,7 +238,13 @@ pub fn parse_any(text: &str, default_unit: Unit) -> Result<Typed, EntryError> {
     let tolerance_value;
     if let Some(t) = tolerance {
         let t = t.trim_start();
-        let (number, used) = take_number(t, column(t))?;
+        let (number, used) = take_number(t, column(t)).map_err(|mut e| {
+            // A ready answer is the whole entry, not the tolerance alone.
+            let whole = whole.trim();
+            let head = &whole[..whole.len() - t.len()];
+            e.hints.iter_mut().for_each(|h| h.insert_str(0, head));
+            e
+        })?;
         tolerance_unit = t[used..].trim();
         if unit_text.is_empty() {
             unit_text = tolerance_unit;
@@ -249,7 +261,7 @@ pub fn parse_any(text: &str, default_unit: Unit) -> Result<Typed, EntryError> {
         let mut e = EntryError::new(
             format!("a pressure over the hall, {unit_text}"),
             "an absolute pressure",
-            column(unit_text),
+            whole.trim()[..number_end].chars().count() + 1,
         );
         if absolute > 0.0 {
             e.hints.push(format!("{} bar", shortest(round_to(absolute, 1e-5))));
@@ -259,12 +271,12 @@ pub fn parse_any(text: &str, default_unit: Unit) -> Result<Typed, EntryError> {
     let (unit_found, unit_typed) = if unit_text.is_empty() {
         (default_unit, false)
     } else {
-        let found = unit(unit_text).ok_or_else(|| {
-            let all: Vec<&str> = Unit::ALL.iter().map(|u| u.symbol()).collect();
+        let found = unit(unit_text).filter(|u| kinds.contains(&u.kind())).ok_or_else(|| {
+            let all: Vec<&str> = Unit::ALL.iter().filter(|u| kinds.contains(&u.kind())).map(|u| u.symbol()).collect();
             EntryError::new(
                 format!("the unit \u{201c}{}\u{201d}", clip(unit_text)),
                 format!("one of {}", all.join(", ")),
-                column(unit_text),
+                whole.trim()[..number_end].chars().count() + 1,
             )
         })?;
         (found, true)
@@ -296,7 +308,8 @@ pub fn parse_any(text: &str, default_unit: Unit) -> Result<Typed, EntryError> {
 }
 
 fn clip(text: &str) -> String {
-    let mut piece: String = text.chars().take(24).collect();
+    // A control character would spoil the place it is shown in.
+    let mut piece: String = text.chars().take(24).map(|c| if c.is_control() { '\u{fffd}' } else { c }).collect();
     if text.chars().count() > 24 {
         piece.push('\u{2026}');
     }
@@ -373,8 +386,22 @@ fn take_number(text: &str, column: usize) -> Result<(f64, usize), EntryError> {
         let found = if text.is_empty() { "nothing".to_string() } else { format!("\u{201c}{}\u{201d}", clip(text)) };
         return Err(EntryError::new(found, wanted, column));
     }
-    let plain = settle(&body, sign, column)?;
-    let (exponent, used) = take_exponent(&text[end..]);
+    let mut plain = settle(&body, sign, column).map_err(|mut e| {
+        // A ready answer keeps the unit and the tolerance that were typed.
+        e.hints.iter_mut().for_each(|h| h.push_str(&text[end..]));
+        e
+    })?;
+    let (mut exponent, mut used) = take_exponent(&text[end..]);
+    if used == 0 && body == "10" {
+        // A power of ten alone: 10^-3.
+        let caret = text[end..].strip_prefix('^');
+        let raised = take_digits(caret.unwrap_or(&text[end..]));
+        let superscript = text[end..].starts_with(|c: char| is_superscript(c));
+        if let Some((value, n)) = raised.filter(|_| caret.is_some() || superscript) {
+            plain = String::from("1");
+            (exponent, used) = (value, n + usize::from(caret.is_some()));
+        }
+    }
     end += used;
     let value: f64 = format!("{sign}{plain}e{exponent}")
         .parse()
@@ -450,31 +477,8 @@ fn groups_of_three(body: &str, separator: char, decimal: char) -> bool {
 
 /// An exponent at the head of a text: `e-3`, `×10^-3`, `·10⁻³`; and how many bytes it takes.
 fn take_exponent(text: &str) -> (i32, usize) {
-    let digits = |t: &str| -> Option<(i32, usize)> {
-        let mut value = String::new();
-        let mut used = 0;
-        for c in t.chars() {
-            let plain = match c {
-                '-' | '\u{2212}' | '\u{207b}' if value.is_empty() => '-',
-                '+' if value.is_empty() => '+',
-                '0'..='9' => c,
-                '\u{2070}' => '0',
-                '\u{b9}' => '1',
-                '\u{b2}' => '2',
-                '\u{b3}' => '3',
-                '\u{2074}'..='\u{2079}' => char::from_digit(c as u32 - 0x2070, 10)?,
-                _ => break,
-            };
-            value.push(plain);
-            used += c.len_utf8();
-        }
-        if value.len() > 4 {
-            return None;
-        }
-        value.parse().ok().map(|v| (v, used))
-    };
     if let Some(rest) = text.strip_prefix(['e', 'E'])
-        && let Some((value, used)) = digits(rest)
+        && let Some((value, used)) = take_digits(rest)
     {
         return (value, used + 1);
     }
@@ -487,11 +491,40 @@ fn take_exponent(text: &str) -> (i32, usize) {
             if let Some(rest) = inner.strip_prefix("10") {
                 let caret = rest.strip_prefix('^');
                 let body = caret.unwrap_or(rest);
-                if let Some((value, used)) = digits(body) {
+                if let Some((value, used)) = take_digits(body) {
                     return (value, lead + mark.len() + gap + 2 + usize::from(caret.is_some()) + used);
                 }
             }
         }
     }
     (0, 0)
+}
+
+fn is_superscript(c: char) -> bool {
+    matches!(c, '\u{207b}' | '\u{2070}' | '\u{b9}' | '\u{b2}' | '\u{b3}' | '\u{2074}'..='\u{2079}')
+}
+
+/// A signed whole number of at most three digits, plain or raised, at the head of a text; and its bytes.
+fn take_digits(text: &str) -> Option<(i32, usize)> {
+    let mut value = String::new();
+    let mut used = 0;
+    for c in text.chars() {
+        let plain = match c {
+            '-' | '\u{2212}' | '\u{207b}' if value.is_empty() => '-',
+            '+' if value.is_empty() => '+',
+            '0'..='9' => c,
+            '\u{2070}' => '0',
+            '\u{b9}' => '1',
+            '\u{b2}' => '2',
+            '\u{b3}' => '3',
+            '\u{2074}'..='\u{2079}' => char::from_digit(c as u32 - 0x2070, 10)?,
+            _ => break,
+        };
+        value.push(plain);
+        used += c.len_utf8();
+    }
+    if value.len() > 4 {
+        return None;
+    }
+    value.parse().ok().map(|v| (v, used))
 }

@@ -58,7 +58,7 @@ pub fn limits_k(name: &str, t_k: f64) -> Result<f64, InstrumentError> {
         _ => {
             return Err(InstrumentError {
                 found: format!("type {} class {class}", kind.to_uppercase()),
-                expected: "types K, N, E, J, T, R, S of class 1 or 2, B of class 2 or 3".to_string(),
+                expected: "types K, N, E, T of class 1 to 3, J, R, S of class 1 or 2, B of class 2 or 3".to_string(),
             });
         }
     };

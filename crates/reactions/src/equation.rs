@@ -42,13 +42,13 @@ pub enum EquationError {
         most: usize,
     },
     /// No sign between the sides, or more than one.
-    #[error("found {found} signs between sides, expected one \u{201c}=\u{201d} or arrow")]
+    #[error("found {} between the sides, expected one \u{201c}=\u{201d} or arrow", if *.found == 0 { "no sign".to_string() } else { alloc::format!("{found} signs") })]
     Sides {
         /// Number found.
         found: usize,
     },
     /// Something that is not a species stands at a place.
-    #[error("at \u{201c}{token}\u{201d}: found {found}, expected {expected}")]
+    #[error("{}found {found}, expected {expected}", place_text(token))]
     Species {
         /// The piece of text.
         token: String,
@@ -58,7 +58,9 @@ pub enum EquationError {
         expected: String,
     },
     /// A coefficient that is not one.
-    #[error("at \u{201c}{token}\u{201d}: found coefficient {found}, expected a number above 0")]
+    #[error(
+        "at \u{201c}{token}\u{201d}: found coefficient {found}, expected a number above 0; reactants stand on the left"
+    )]
     Coefficient {
         /// The piece of text.
         token: String,
@@ -70,6 +72,8 @@ pub enum EquationError {
     Unbalanced {
         /// Element, and surplus on the right (negative: on the left), as text.
         surplus: Vec<(String, String)>,
+        /// The same substances balanced, where one balance exists.
+        balanced: Option<String>,
     },
     /// Written without coefficients, and no coefficients balance it.
     #[error("no coefficients balance it: {why}")]
@@ -96,6 +100,10 @@ pub enum EquationError {
     /// Everything cancels.
     #[error("found the same on both sides, expected a change")]
     Nothing,
+}
+
+fn place_text(token: &str) -> String {
+    if token.is_empty() { String::new() } else { alloc::format!("at \u{201c}{token}\u{201d}: ") }
 }
 
 fn surplus_text(surplus: &[(String, String)]) -> String {
@@ -280,7 +288,8 @@ fn parse_sum(text: &str) -> Result<Equation, EquationError> {
 }
 
 fn clip(text: &str) -> String {
-    let mut piece: String = text.chars().take(24).collect();
+    // A control character would spoil the place it is shown in.
+    let mut piece: String = text.chars().take(24).map(|c| if c.is_control() { '\u{fffd}' } else { c }).collect();
     if piece.chars().count() < text.chars().count() {
         piece.push('\u{2026}');
     }
@@ -318,6 +327,13 @@ fn split_terms(side: &str) -> Vec<&str> {
 
 fn parse_single(text: &str) -> Result<Equation, EquationError> {
     let sides = split_sides(text);
+    if text.is_empty() {
+        return Err(EquationError::Species {
+            token: String::new(),
+            found: "nothing".to_string(),
+            expected: "an equation, for example Cr + H2O = Cr2O3 + H2".to_string(),
+        });
+    }
     if sides.len() != 2 {
         return Err(EquationError::Sides { found: sides.len() - 1 });
     }
@@ -330,7 +346,7 @@ fn parse_single(text: &str) -> Result<Equation, EquationError> {
             let name = name.trim_start().trim_start_matches(['*', '·', '×']).trim();
             if name.is_empty() {
                 return Err(EquationError::Species {
-                    token: clip(if token.is_empty() { side } else { token }),
+                    token: clip([token, side, text].into_iter().find(|t| !t.is_empty()).unwrap_or("")),
                     found: "nothing".to_string(),
                     expected: "a formula on both sides of every + and =".to_string(),
                 });
@@ -375,7 +391,10 @@ fn parse_single(text: &str) -> Result<Equation, EquationError> {
     }
     if any_coefficient {
         let surplus = surplus.into_iter().map(|(e, n)| (e.symbol().to_string(), number_text_signed(&n))).collect();
-        return Err(EquationError::Unbalanced { surplus });
+        let one = |t: &Term| if t.coefficient.is_negative() { -BigRational::one() } else { BigRational::one() };
+        let bare = terms.iter().map(|t| Term { species: t.species.clone(), coefficient: one(t) }).collect();
+        let balanced = balance(bare).ok().map(|e| e.text());
+        return Err(EquationError::Unbalanced { surplus, balanced });
     }
     balance(terms)
 }
@@ -434,7 +453,8 @@ fn balance(mut terms: Vec<Term>) -> Result<Equation, EquationError> {
     }
     let mut v = scaled(&space[0]);
     let agreeing = v.iter().zip(&terms).filter(|(n, t)| n.is_positive() == t.coefficient.is_positive()).count();
-    if agreeing * 2 < v.len() {
+    let first_agrees = v[0].is_positive() == terms[0].coefficient.is_positive();
+    if agreeing * 2 < v.len() || (agreeing * 2 == v.len() && !first_agrees) {
         v = v.into_iter().map(|n| -n).collect();
     }
     for (n, t) in v.iter().zip(&terms) {
@@ -443,11 +463,18 @@ fn balance(mut terms: Vec<Term>) -> Result<Equation, EquationError> {
                 why: alloc::format!("{} takes no part; leave it out, or give coefficients", t.species.text()),
             });
         }
-        if n.is_positive() != t.coefficient.is_positive() {
-            return Err(EquationError::Unbalanceable {
-                why: alloc::format!("{} belongs on the other side", t.species.text()),
-            });
-        }
+    }
+    let astray: Vec<String> = v
+        .iter()
+        .zip(&terms)
+        .filter(|(n, t)| n.is_positive() != t.coefficient.is_positive())
+        .map(|(_, t)| t.species.text())
+        .collect();
+    if !astray.is_empty() {
+        let belong = if astray.len() == 1 { "belongs" } else { "belong" };
+        return Err(EquationError::Unbalanceable {
+            why: alloc::format!("{} {belong} on the other side", astray.join(" and ")),
+        });
     }
     for (t, n) in terms.iter_mut().zip(v) {
         t.coefficient = n;
@@ -488,6 +515,9 @@ fn take_number(text: &str) -> Result<(Option<BigRational>, &str), String> {
         if let Some(rest) = text.strip_prefix(sign) {
             return Ok((Some(BigRational::new(BigInt::from(n), BigInt::from(d))), rest));
         }
+    }
+    if let Some(sign) = text.chars().next().filter(|c| matches!(c, '-' | '\u{2212}')) {
+        return Err(alloc::format!("\u{201c}{sign}\u{201d}"));
     }
     let end = text.find(|c: char| !(c.is_ascii_digit() || matches!(c, '.' | ',' | '/'))).unwrap_or(text.len());
     let number = &text[..end];

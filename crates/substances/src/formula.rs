@@ -110,7 +110,12 @@ impl Parser<'_> {
     }
 
     fn error(&self, expected: &str) -> FormulaError {
-        let found = self.peek().map_or_else(|| String::from("the end"), |c| alloc::format!("\u{201c}{c}\u{201d}"));
+        let found = match self.peek() {
+            None => String::from("the end"),
+            // A control character would spoil the place it is shown in.
+            Some(c) if c.is_control() => alloc::format!("a control character (U+{:04X})", u32::from(c)),
+            Some(c) => alloc::format!("\u{201c}{c}\u{201d}"),
+        };
         FormulaError { at: self.at, found, expected: expected.to_string() }
     }
 
@@ -141,7 +146,12 @@ impl Parser<'_> {
             }
         }
         if self.at == start {
-            return Err(self.error("an element symbol"));
+            let small = self.peek().is_some_and(char::is_lowercase);
+            return Err(self.error(if small {
+                "an element symbol, which begins with a capital letter"
+            } else {
+                "an element symbol"
+            }));
         }
         Ok(counts)
     }
@@ -158,13 +168,13 @@ impl Parser<'_> {
             return Err(FormulaError {
                 at: self.at,
                 found: alloc::format!("\u{201c}{two}\u{201d}"),
-                expected: String::from("the symbol of an element, for example Fe or O"),
+                expected: String::from("the symbol of an element that the program knows, for example Fe or O"),
             });
         }
         let element = Element::from_symbol(&first).ok_or_else(|| FormulaError {
             at: self.at,
             found: alloc::format!("\u{201c}{first}\u{201d}"),
-            expected: String::from("the symbol of an element, for example Fe or O"),
+            expected: String::from("the symbol of an element that the program knows, for example Fe or O"),
         })?;
         self.at += 1;
         Ok(element)
@@ -208,7 +218,7 @@ impl Parser<'_> {
         let denominator = 10u64.pow(u32::try_from(decimals).unwrap_or(0));
         if numerator == 0 {
             self.at = start;
-            return Err(self.error("a subscript above 0"));
+            return Err(self.error("a subscript above 0; oxygen is the letter O"));
         }
         Ok(Some(BigRational::new(numerator.into(), denominator.into())))
     }
