@@ -10,7 +10,7 @@ use leeway_quantity::entry;
 use leeway_quantity::math::{ln, sqrt};
 use leeway_quantity::{Kind, Unit};
 use leeway_reactions::{Equation, Reaction as Joined};
-use leeway_substances::{Book, Species};
+use leeway_substances::{Book, Class, Species};
 
 const LN_10: f64 = core::f64::consts::LN_10;
 
@@ -75,7 +75,7 @@ pub(crate) fn change(book: &Book, request: &ChangeRequest) -> Result<Vec<Reactio
             let sum = joined.sum(t, &chosen);
             let rt = GAS_CONSTANT * KJ_PER_J * t;
             let (u_dh, u_ds) = joined.u_dh_ds(book, &chosen);
-            let u_dg = sqrt(joined.data_doubt(book, t, &chosen).iter().map(|(_, c)| c * c).sum());
+            let u_dg = sqrt(joined.data_doubt(book, t, &chosen).iter().fold(0.0, |sum, (_, c)| sum + c * c));
             let used: Vec<Used> = joined
                 .used
                 .iter()
@@ -100,6 +100,10 @@ pub(crate) fn change(book: &Book, request: &ChangeRequest) -> Result<Vec<Reactio
                 })
                 .collect();
             let mut notes = joined.notes.clone();
+            for u in joined.used.iter().filter(|u| u.either && u.class == Class::Gas) {
+                let f = &u.formula;
+                notes.push(alloc::format!("{f} is read as gas; write {f}(l) or {f}(s) for the other"));
+            }
             for u in used.iter().filter(|u| u.extrapolated) {
                 notes.push(alloc::format!("{} ({}) is carried beyond its fitted range", u.formula, u.phase));
             }

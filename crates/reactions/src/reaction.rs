@@ -34,6 +34,8 @@ pub struct Used {
     pub substance: usize,
     /// Gas or condensed.
     pub class: Class,
+    /// Nothing was asked of the state, and the data hold the substance both as gas and condensed.
+    pub either: bool,
     candidates: Vec<(usize, usize)>,
 }
 
@@ -77,7 +79,6 @@ impl Reaction {
     /// [`ReactionError`] where a species is not in the data, or not in the phase asked for.
     pub fn new(book: &Book, equation: &Equation) -> Result<Self, ReactionError> {
         let mut used = Vec::with_capacity(equation.terms.len());
-        let mut notes = Vec::new();
         let holds = |f: &str| equation.terms.iter().any(|t| t.species.formula.text() == f);
         for term in &equation.terms {
             let species = &term.species;
@@ -87,23 +88,20 @@ impl Reaction {
             let class = book.class_of(substance, &species.asked);
             let candidates = book.candidates(substance, &species.asked, &holds)?;
             let classes = |c: Class| book.substances[substance].records.iter().any(|r| r.class == c);
-            if species.asked == Asked::Any && classes(Class::Gas) && classes(Class::Condensed) && class == Class::Gas {
-                notes
-                    .push(alloc::format!("{formula} is read as gas; write {formula}(l) or {formula}(s) for the other"));
-            }
             used.push(Used {
                 formula: formula.to_string(),
                 text: species.text(),
                 nu: term.coefficient.to_f64().unwrap_or(f64::NAN),
                 substance,
                 class,
+                either: species.asked == Asked::Any && classes(Class::Gas) && classes(Class::Condensed),
                 candidates,
             });
         }
         let mut reaction = Self {
             equation: equation.clone(),
             used,
-            notes,
+            notes: Vec::new(),
             constants: None,
             grid_k: Vec::new(),
             dg0_kj: Vec::new(),
