@@ -124,8 +124,7 @@ fn equations() {
     let s = session();
     let mut sheet = Sheet::default();
     let long = "Fe + ".repeat(200) + "O2 = FeO";
-    let wide =
-        format!("{} = Fe", vec!["Fe"; 3].join(" + ") + &(1..26).map(|n| format!(" + Fe{n}O")).collect::<String>());
+    let wide = format!("{} = Fe", ["Fe"; 3].join(" + ") + &(1..26).map(|n| format!(" + Fe{n}O")).collect::<String>());
     for (name, equation) in [
         ("nothing typed", ""),
         ("only spaces", "   "),

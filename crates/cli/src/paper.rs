@@ -56,11 +56,11 @@ fn short(x: f64) -> String {
 }
 
 /// Rounds a leeway towards its turning point.
-fn leeway(x: f64) -> String {
+fn leeway(x: f64, unit: &str) -> String {
     let size = x.abs();
     let step: f64 = if size >= 100.0 {
         1.0
-    } else if size >= 1.0 {
+    } else if size >= 1.0 || matches!(unit, "C" | "F" | "K") {
         0.1
     } else {
         0.001
@@ -82,7 +82,16 @@ fn percent(x: f64) -> String {
 }
 
 fn celsius(kelvin: f64) -> String {
-    format!("{} C", fixed(kelvin - 273.15, 1))
+    format!("{} \u{b0}C", fixed(kelvin - 273.15, 1))
+}
+
+/// A unit as it stands behind a number.
+fn unit_after(unit: &str) -> String {
+    match unit {
+        "fraction" => String::new(),
+        "C" | "F" => format!(" \u{b0}{unit}"),
+        other => format!(" {other}"),
+    }
 }
 
 /// The unit of a distance along a lever: degrees become kelvin.
@@ -131,6 +140,14 @@ impl Paper {
         self.text.push('\n');
     }
 
+    fn wrapped_bold(&mut self, text: &str) {
+        let mut plain = Self::new(false);
+        plain.wrapped(0, text);
+        for row in plain.text.lines() {
+            self.line(&self.bold(row));
+        }
+    }
+
     fn wrapped(&mut self, indent: usize, text: &str) {
         let space = " ".repeat(indent);
         let mut row = space.clone();
@@ -166,7 +183,7 @@ impl Paper {
     /// A line assessed.
     pub(crate) fn assessment(&mut self, a: &Assessment, zone: Option<&str>, change: Option<&str>) {
         let invented = if a.invented { " (invented line)" } else { "" };
-        self.line(&self.bold(&a.summary.sentence));
+        self.wrapped_bold(&a.summary.sentence);
         if !a.summary.remedy.is_empty() {
             self.wrapped(0, &a.summary.remedy);
         }
@@ -205,7 +222,7 @@ impl Paper {
             pad("change", names),
             pad("zone", zones),
             pad("standing", 17),
-            pad_left("at C", 7),
+            pad_left("at \u{b0}C", 7),
             pad_left("dG kJ", 16),
             "leeway"
         );
@@ -218,7 +235,7 @@ impl Paper {
             let lever = f.levers.iter().find(|l| l.leeway.is_some());
             let room = lever.map_or_else(String::new, |l| {
                 let z = f.leeway_u.map_or_else(String::new, |z| format!(", {} u", fixed(z, 1)));
-                format!("{} {} {}{z}", leeway(l.leeway.unwrap_or(0.0)), step_unit(&l.unit), short_label(l))
+                format!("{} {} {}{z}", leeway(l.leeway.unwrap_or(0.0), &l.unit), step_unit(&l.unit), short_label(l))
             });
             let standing = self.standing(&f.standing, &pad(&f.standing, 17));
             self.line(&format!(
@@ -248,10 +265,10 @@ impl Paper {
             ));
         }
         for l in &f.levers {
-            let unit = if l.unit == "fraction" { String::new() } else { format!(" {}", l.unit) };
+            let unit = unit_after(&l.unit);
             let turn = l.turning_points.iter().map(|t| short(*t)).collect::<Vec<_>>().join("; ");
             let turn = if turn.is_empty() { l.why_not.clone() } else { format!("{turn}{unit}") };
-            let room = l.leeway.map_or_else(String::new, |x| format!("{} {}", leeway(x), step_unit(&l.unit)));
+            let room = l.leeway.map_or_else(String::new, |x| format!("{} {}", leeway(x, &l.unit), step_unit(&l.unit)));
             let z = l.leeway_u.map_or_else(String::new, |z| fixed(z, 1));
             self.line(&format!(
                 "  {} {} {} {} {}",
@@ -269,7 +286,7 @@ impl Paper {
             let just = if r.just_turns == r.from {
                 String::new()
             } else {
-                format!(" (only just turns at {} {})", short(r.just_turns), r.unit)
+                format!(" (only just turns at {}{})", short(r.just_turns), unit_after(&r.unit))
             };
             self.wrapped(2, &format!("brings it back: {}{just}", r.sentence));
         }
@@ -334,8 +351,9 @@ impl Paper {
     pub(crate) fn reactions(&mut self, list: &[Reaction]) {
         let Some(first) = list.first() else { return };
         self.line(&self.bold(&first.equation));
+        let range = if first.used.is_empty() { "searched" } else { "data" };
         self.line(&format!(
-            "goes {} (data from {} to {})",
+            "goes {} ({range} from {} to {})",
             first.goes,
             celsius(first.data_k[0]),
             celsius(first.data_k[1])

@@ -73,6 +73,12 @@ fn fail(at: &str, found: String, expected: &str) -> FileError {
     }
 }
 
+/// A place in a list: digits without a sign or a leading zero (RFC 6901, section 4).
+fn index(key: &str) -> Option<usize> {
+    let plain = key.bytes().all(|b| b.is_ascii_digit()) && (key == "0" || !key.starts_with('0'));
+    key.parse().ok().filter(|_| plain)
+}
+
 fn apply(root: &mut Json, step: &Json) -> Result<(), (String, &'static str)> {
     let path = step
         .get("path")
@@ -88,7 +94,7 @@ fn apply(root: &mut Json, step: &Json) -> Result<(), (String, &'static str)> {
     for key in parents {
         at = match at {
             Json::Object(members) => members.iter_mut().find(|(k, _)| k == key).map(|(_, v)| v).ok_or_else(missing)?,
-            Json::List(list) => key.parse::<usize>().ok().and_then(|i| list.get_mut(i)).ok_or_else(missing)?,
+            Json::List(list) => index(key).and_then(|i| list.get_mut(i)).ok_or_else(missing)?,
             _ => return Err(missing()),
         };
     }
@@ -102,7 +108,7 @@ fn apply(root: &mut Json, step: &Json) -> Result<(), (String, &'static str)> {
             }
         }
         ("add", Json::List(list)) => {
-            let i = if last == "-" { list.len() } else { last.parse().map_err(|_| missing())? };
+            let i = if last == "-" { list.len() } else { index(last).ok_or_else(missing)? };
             if i > list.len() {
                 return Err(missing());
             }
@@ -114,14 +120,14 @@ fn apply(root: &mut Json, step: &Json) -> Result<(), (String, &'static str)> {
         }
         ("replace", Json::List(list)) => {
             let value = value()?;
-            *last.parse::<usize>().ok().and_then(|i| list.get_mut(i)).ok_or_else(missing)? = value;
+            *index(last).and_then(|i| list.get_mut(i)).ok_or_else(missing)? = value;
         }
         ("remove", Json::Object(members)) => {
             let i = members.iter().position(|(k, _)| k == last).ok_or_else(missing)?;
             members.remove(i);
         }
         ("remove", Json::List(list)) => {
-            let i = last.parse::<usize>().ok().filter(|i| *i < list.len()).ok_or_else(missing)?;
+            let i = index(last).filter(|i| *i < list.len()).ok_or_else(missing)?;
             list.remove(i);
         }
         ("add" | "replace" | "remove", _) => return Err(missing()),

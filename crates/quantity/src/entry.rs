@@ -2,7 +2,8 @@
 //!
 //! Decimal comma or point; thousands apart by a thin or plain space or an apostrophe; a minus of any kind;
 //! exponents; a tolerance after ±; `<` for a reading at its detection limit; units in many spellings. What
-//! can mean two things is refused with both as ready answers; nothing is guessed.
+//! can mean two things is refused with both as ready answers; nothing is guessed. Where only one of the two can
+//! be a reading of a hot line (`1.025 bar`, for nothing runs at 1025 bar), there is nothing to guess.
 
 use crate::constants::BAR_PER_ATM;
 use crate::reading::{Quantity, QuantityError, Spread};
@@ -35,11 +36,13 @@ pub struct EntryError {
     /// Place in the text, in characters from 1.
     pub column: usize,
     hints: Vec<String>,
+    /// The number could be read in two ways; the hints are both.
+    two_ways: bool,
 }
 
 impl EntryError {
     fn new(found: impl Into<String>, expected: impl Into<String>, column: usize) -> Self {
-        Self { found: found.into(), expected: expected.into(), column, hints: Vec::new() }
+        Self { found: found.into(), expected: expected.into(), column, hints: Vec::new(), two_ways: false }
     }
 
     /// Ready answers, as they would be typed.
@@ -204,6 +207,31 @@ pub fn parse_any(text: &str, default_unit: Unit) -> Result<Typed, EntryError> {
 /// # Errors
 /// [`EntryError`] as for [`parse`].
 pub fn parse_of(text: &str, kinds: &[Kind], default_unit: Unit) -> Result<Typed, EntryError> {
+    let error = match parse_plain(text, kinds, default_unit) {
+        Err(e) if e.two_ways => e,
+        other => return other,
+    };
+    // 1.025 bar may be typed: 1025 bar is no gas of a hot line, so only one of the two can be meant.
+    let mut can_be = error.hints.iter().filter_map(|h| parse_plain(h, kinds, default_unit).ok()).filter(plausible);
+    match (can_be.next(), can_be.next()) {
+        (Some(only), None) => Ok(only),
+        _ => Err(error),
+    }
+}
+
+/// Whether a hot line can show the reading; used only to choose between two ways to read one number.
+fn plausible(typed: &Typed) -> bool {
+    let most = match typed.quantity.unit.kind() {
+        Kind::Temperature => 6000.0,
+        Kind::Pressure => 300.0,
+        Kind::Fraction => 1.03,
+        Kind::Voltage => 5.0,
+        Kind::Rate | Kind::Time => f64::INFINITY,
+    };
+    typed.quantity.value <= most
+}
+
+fn parse_plain(text: &str, kinds: &[Kind], default_unit: Unit) -> Result<Typed, EntryError> {
     let whole = text;
     let length = whole.chars().count();
     if length > LONGEST {
@@ -452,6 +480,7 @@ fn settle(body: &str, sign: &str, column: usize) -> Result<String, EntryError> {
                         "one that can be read one way only",
                         column,
                     );
+                    e.two_ways = true;
                     e.hints = alloc::vec![format!("{sign}{before}{after}"), format!("{sign}{before}.{after}0")];
                     return Err(e);
                 }
