@@ -158,7 +158,7 @@ PREFERRED = {
     ("Fe2O3", False): ("JANAF-1998", "gives magnetite in air at 1384 C, textbooks about 1390"),
     ("Fe3O4", False): ("JANAF-1998", "one evaluation with Fe2O3; iron-magnetite below 500 C"),
     ("Fe0.947O", False): ("Robie-Hemingway-1995", "meets iron and magnetite nearest to the known 843 K"),
-    ("FeO", False): ("ONeill-Pownceby-1993", "galvanic cell beside iron; measured gas ratios within 5 %"),
+    ("FeO", False): ("ONeill-1988", "galvanic cell beside iron; measured gas ratios within 5 %"),
     ("MgCO3", False): ("Berman-1988", "phase equilibria and calorimetry; decomposes at 1 atm near 410 C"),
     ("CaCO3", False): ("NASA-Glenn-2002", "in the middle of the measured decomposition pressures"),
     ("NiO", False): ("ONeill-Pownceby-1993", "galvanic cell, reproducible to 0.2 kJ"),
@@ -612,7 +612,7 @@ def combined(book, have):
         record = pick(formula, gas)
         return lambda t: record.values(float(t)).G(t)
 
-    O2, OP = g("O2", True), "ONeill-Pownceby-1993"
+    O2, OP, ON = g("O2", True), "ONeill-Pownceby-1993", "ONeill-1988"
     fe, ni, co, cu = g("Fe"), g("Ni"), g("Co"), g("Cu")
 
     # Fe + 1/2 O2 = FeO of wustite beside iron
@@ -634,9 +634,9 @@ def combined(book, have):
     mt = g("Fe3O4")
     wm = potential("-581927", "-65.618", "38.7410")
     m, w2 = fit_g(lambda t: (2 * mt(t) - wm(t) - O2(t)) / 6, 833, 1270, [0, 1])
-    notes.append(f"beside magnetite: O'Neill 1988 with Fe3O4 of this file, residual {digits(w2 / 1000, 2)} kJ/mol")
+    notes.append(f"beside magnetite: potential of 6 FeO + O2 = 2 Fe3O4 with Fe3O4 of this file, residual {digits(w2 / 1000, 2)} kJ/mol")
     out.append(("FeO", Record(
-        OP, mpf("-272.0"), 0.6, mpf("60.45"), 0.4, "; ".join(notes), "galvanic cells and gas equilibria within 1 kJ",
+        ON, mpf("-272.0"), 0.6, mpf("60.45"), 0.4, "; ".join(notes), "galvanic cells and gas equilibria within 1 kJ",
         [wustite, Phase("wustite-m", "s", [m], beside="Fe3O4")], anchored=False,
     )))
 
