@@ -10,7 +10,7 @@
 export const initial = (line) => ({
   doc: { line, before: null, beforeWord: '', recipe: null, variant: null, what: '' },
   past: [], future: [], saved: line, savedAt: '', fileName: '', demo: null, storage: null,
-  view: 'board', cell: null, change: 0, lever: null, edit: null, panel: null, menu: null, fields: {}, notices: [], welcome: false, confirm: null,
+  view: 'board', cell: null, change: -1, lever: null, edit: null, panel: null, menu: null, fields: {}, notices: [], welcome: false, confirm: null,
   shown: null, shownLine: null, compared: null, lineProblem: null, working: false,
   proposals: null, query: '', rows: null, formula: null, substance: null, phase: 0, readTemperature: null, dataVersion: '',
 });
@@ -76,7 +76,7 @@ export function redo(state) {
 /** Another line altogether: its history begins anew, the old one stays one undo away. @param {State} state @param {Line} line @param {{fileName?: string, demo?: string | null, what: string}} from @returns {State} */
 export function opened(state, line, from) {
   const next = put(state, { line, before: null, beforeWord: '', recipe: null, variant: null, what: from.what });
-  return { ...next, saved: line, savedAt: '', fileName: from.fileName ?? '', demo: from.demo ?? null, view: 'board', cell: null, change: 0, lever: null, panel: null, fields: {}, confirm: null, lineProblem: null };
+  return { ...next, saved: line, savedAt: '', fileName: from.fileName ?? '', demo: from.demo ?? null, view: 'board', cell: null, change: -1, lever: null, panel: null, fields: {}, confirm: null, lineProblem: null };
 }
 
 /** Points to things that no longer stand are let go. @param {State} state @returns {State} */

@@ -62,7 +62,8 @@ export function gauge(doc, { figure, before, standing: name, span, width, k }) {
     out.push(s(doc, 'path', { d: `M${e + g} ${y - 6}L${e} ${y}L${e + g} ${y + 6}`, class: `l-${tone}`, fill: 'none', 'stroke-width': 2 }));
   } else {
     const ends = `${dot - bar >= 2 ? `M${lo.toFixed(1)} ${y - 6}v12` : ''}${dot + bar <= W - 2 ? `M${hi.toFixed(1)} ${y - 6}v12` : ''}`;
-    out.push(s(doc, 'path', { d: `M${lo.toFixed(1)} ${y}H${hi.toFixed(1)}${ends}`, class: `l-${tone}`, 'stroke-width': 2 }));
+    // A doubt smaller than the mark is not drawn: it would only fray its edge.
+    if (bar > 7) out.push(s(doc, 'path', { d: `M${lo.toFixed(1)} ${y}H${hi.toFixed(1)}${ends}`, class: `l-${tone}`, 'stroke-width': 2 }));
   }
   out.push(mark(doc, name, beyond ? dot + (figure.d < 0 ? 6 : -6) : dot, y));
   return s(doc, 'svg', { viewBox: `0 0 ${W} ${H}`, 'aria-hidden': 'true', class: 'gauge' }, out);

@@ -53,20 +53,27 @@ export function trace(doc, { bays, change, charge, width, height, label: L, befo
   }
   low -= room * 0.6;
   high += room * 0.5;
-  const y = (/** @type {number} */ t) => Number((base - ((t - low) / (high - low)) * (base - top - 6)).toFixed(1));
+  // Below the temperature it acts above nothing is decided: where that would take much of the height, its scale is shortened.
+  const short = actsC !== null && actsC - low > 0.3 * (high - low) && actsC < high - 40 ? actsC : null;
+  const tall = base - top - 6;
+  const foot = short === null ? 0 : tall * 0.24;
+  const y = (/** @type {number} */ t) => {
+    const up = short === null ? ((t - low) / (high - low)) * tall : t < short ? ((t - low) / (short - low)) * foot : foot + ((t - short) / (high - short)) * (tall - foot);
+    return Number((base - up).toFixed(1));
+  };
   const inside = (/** @type {number} */ t) => t >= low && t <= high;
   /** @type {any[]} */
   const out = [];
   const text = (/** @type {number} */ px, /** @type {number} */ py, /** @type {string} */ words, /** @type {string} */ cls, anchor = 'start') => s(doc, 'text', { x: Number(px.toFixed(1)), y: Number(py.toFixed(1)), class: cls, 'text-anchor': anchor }, words);
 
-  const scale = ticks(low, high, Math.max(2, Math.floor((base - top) / 26)));
+  const scale = ticks(short ?? low, high, Math.max(2, Math.floor((base - top - foot) / 26)));
   if (L > 60) {
     out.push(text(0, y(scale.at(-1) ?? high) + 4.5, 'Temperature', 'q'));
     scale.forEach((t, i) => {
       out.push(s(doc, 'path', { d: `M${L} ${y(t)}H${W}`, class: 'grid' }), s(doc, 'path', { d: `M${L - 6} ${y(t)}h6`, class: 'axis' }));
       out.push(text(L - 10, y(t) + 4.5, i === scale.length - 1 ? withUnit(dressed(String(t)), '°C') : dressed(String(t)), 'q', 'end'));
     });
-    out.push(s(doc, 'path', { d: `M${L} ${top}V${base}`, class: 'axis' }));
+    out.push(s(doc, 'path', { d: short === null ? `M${L} ${top}V${base}` : `M${L} ${top}V${base - foot + 6}M${L} ${base - foot + 12}V${base}M${L - 5} ${base - foot + 9}l10 -5M${L - 5} ${base - foot + 14}l10 -5`, class: 'axis' }));
   }
   if (actsC !== null && inside(actsC)) out.push(s(doc, 'path', { d: `M${L} ${y(actsC)}H${W}`, class: 'l-paperonly', 'stroke-width': 1.2, 'stroke-dasharray': '10 4 2 4' }));
 

@@ -39,6 +39,14 @@ export function sayFigure(figure) {
   return { big: '', unit: '' };
 }
 
+/** The change whose turn is drawn on the line: the one chosen, else the worst, else the first. @param {State} state */
+export function selectedOf(state) {
+  const a = state.shown;
+  const worst = a && a.summary.worst !== null ? a.findings[a.summary.worst]?.change_index : undefined;
+  const wanted = state.change >= 0 ? state.change : worst ?? 0;
+  return Math.min(wanted, Math.max(0, changesOf(lineOnShow(state)).length - 1));
+}
+
 /** Chips of one zone. @param {State} state @param {number} i @param {Set<string>} shared @returns {Target[]} */
 function zoneTargets(state, i, shared) {
   const zone = zonesOf(lineOnShow(state))[i];
@@ -111,7 +119,7 @@ export function head(state, act, f) {
   const none = zonesOf(line).length === 0;
   const first = none ? 'No zone yet. Begin with the hottest.' : a ? say(a.summary.sentence) : 'Reading the line …';
   const second = state.edit?.tentative ? tryWords(state) : a?.summary.remedy ? say(a.summary.remedy) : '';
-  const about = state.doc.variant ? line.variants?.find((v) => v.name === state.doc.variant)?.about ?? '' : '';
+  const about = state.doc.variant ? variants.find((v) => v.name === state.doc.variant)?.about ?? '' : '';
   const hidden = a && !none ? countsWords(a) : '';
   return [
     h('h1', { 'data-key': 'h1', 'aria-live': 'polite' }, first),
@@ -121,14 +129,13 @@ export function head(state, act, f) {
       h('p', { class: 'under' },
         line.invented ? h('span', { class: 'invented' }, 'Invented line') : null,
         h('button', { type: 'button', class: 'linename', onclick: () => act.panel('line', 0), 'aria-label': `${line.name}: name and notes of the line` }, line.name),
-        h('span', { class: 'rest' }, [line.readings_note, hidden].filter(Boolean).map((t) => ` ${t}`).join(' '))),
+        h('span', { class: 'rest' }, [about || line.readings_note, hidden].filter(Boolean).map((t) => ` ${say(t ?? '')}`).join(' '))),
       variants.length
         ? h('div', { class: 'modes', role: 'group', 'aria-label': line.invented ? 'Demo line as' : 'Line as' },
             h('button', { type: 'button', 'aria-pressed': String(!state.doc.variant), 'data-key': 'recipe', onclick: () => state.doc.variant && act.recipe() }, 'As recipe'),
             variants.map((v) => h('button', { type: 'button', 'data-key': `v-${v.name}`, title: v.about, 'aria-pressed': String(state.doc.variant === v.name), onclick: () => act.variant(v.name) }, v.name)))
         : null,
-      state.doc.variant ? button('Back to recipe', act.recipe, 'btn', { 'data-key': 'back' }) : null),
-    about ? h('p', { class: 'about', 'data-key': 'about' }, say(about)) : null,
+      state.doc.variant ? button('Back to recipe', act.recipe, 'btn backkey', { 'data-key': 'back' }) : null),
   ];
 }
 
@@ -172,7 +179,7 @@ export function board(state, act) {
   const total = Math.max(f.width, f.label + n * least);
   const col = n ? (total - f.label) / n : total - f.label;
   const columns = f.label ? `${f.label}px repeat(${Math.max(n, 1)}, minmax(0, 1fr))` : `repeat(${Math.max(n, 1)}, minmax(0, 1fr))`;
-  const selected = Math.min(state.change, Math.max(0, changesOf(line).length - 1));
+  const selected = selectedOf(state);
   const wide = total > f.width + 1;
   return h('main', { class: `board-view${state.edit ? ' editing' : ''}`, id: 'main' },
     head(state, act, f),
@@ -183,9 +190,9 @@ export function board(state, act) {
         tabs(state, act, f),
         drawLine(state, act, f, total, selected),
         chips(state, act, f, col),
+        state.edit ? pad(state, act, { f, col, n }) : null,
         gridHead(state, act, f),
-        grid(state, act, f, col, selected),
-        state.edit ? pad(state, act, { f, col, n }) : null)),
+        grid(state, act, f, col, selected))),
     notes(state, act));
 }
 
@@ -211,7 +218,7 @@ function drawLine(state, act, f, width, selected) {
   });
   const change = changesOf(line)[selected]?.name ?? 'No change';
   return h('button', { type: 'button', class: 'line', onclick: () => act.panel('charge', 0), 'aria-label': `The charge: ${line.charge_name || 'not named'}. Open to change`, 'data-key': 'trace' },
-    trace(document, { bays, change: say(change), charge: line.charge_name || (line.charge?.length ? line.charge.map((m) => formulas(m.substance)).join(', ') : 'No charge yet: tap to name it'), width, height: f.roomy && f.tall ? 190 : f.tablet ? 150 : 132, label: f.label, beforeWord: beforeWord(state) }));
+    trace(document, { bays, change: say(change), charge: say(line.charge_name ?? '') || (line.charge?.length ? line.charge.map((m) => formulas(m.substance)).join(', ') : 'No charge yet: tap to name it'), width, height: f.roomy && f.tall ? 200 : f.tablet ? 150 : 140, label: f.label, beforeWord: beforeWord(state) }));
 }
 
 /** @param {State} state @param {Act} act @param {ReturnType<typeof frame>} f @param {number} col */
@@ -223,8 +230,8 @@ function chips(state, act, f, col) {
   /** @type {any[]} */
   const all = [];
   for (const key of shared) all.push(chip(state, act, { kind: 'channel', field: 'gas', key, label: `${formulas(key)} share`, zones: every }, 'all zones'));
-  if (line.pressure) all.push(chip(state, act, { kind: 'line', field: 'pressure', label: 'Pressure', zones: [] }, zones.some((z) => z.pressure) ? 'other zones' : 'all zones'));
-  return h('div', { class: `chips${col >= 168 ? ' two' : ''}` },
+  if (line.pressure && zones.some((z) => !z.pressure)) all.push(chip(state, act, { kind: 'line', field: 'pressure', label: 'Pressure', zones: [] }, zones.some((z) => z.pressure) ? 'other zones' : 'all zones'));
+  return h('div', { class: `chips${col >= 168 ? ' pairs' : ''}` },
     h('div', { class: 'all', 'data-key': 'all' }, all),
     zones.map((z, i) => h('div', { 'data-key': `chips-${z.name}` }, zoneTargets(state, i, shared).map((t) => chip(state, act, t)), state.shown?.zones[i]?.refused ? h('p', { class: 'refusal' }, sentence(state.shown.zones[i].refused?.message ?? '')) : null)));
 }
@@ -307,7 +314,7 @@ function cell(state, act, f, col, finding, lever, span) {
     'aria-label': `${finding.change}, ${finding.zone_index + 1} ${finding.zone}: ${st.word}${big ? `, leeway ${big} ${u}` : ''}${doubt}${at ? `, judged ${at}` : ''}${why ? `. ${why}` : ''}${differs ? `; shifted: ${finding.shifted?.standing}` : ''}`,
     onclick: () => act.openCell(finding.zone_index, finding.change_index),
   },
-  h('span', { class: 'say' }, big ? h('b', { class: figure.kind === 'turns' ? '' : 'small' }, big) : null, u ? h('span', null, u) : null, h('i', null, st.short), differs ? h('span', { class: 'at' }, 'not if shifted') : at && col > 178 ? h('span', { class: 'at' }, at) : null),
+  h('span', { class: 'say' }, big ? h('b', { class: figure.kind === 'turns' ? '' : 'small' }, big) : null, u ? h('span', null, u) : null, h('i', null, st.short), differs ? h('span', { class: 'at' }, 'not if shifted') : at && (big.length * 10 + (u.length + st.short.length + at.length) * 7.3 + 40 < col) ? h('span', { class: 'at' }, at) : null),
   why ? h('span', { class: 'why' }, sentence(why)) : gauge(document, { figure, before: before ? figureOf(before, lever) : null, standing: finding.standing, span, width: Math.floor(col) - 15, k }));
 }
 
@@ -368,7 +375,7 @@ function phone(state, act, f) {
   const changes = changesOf(line);
   const a = state.shown;
   const ready = a && a.zones.length === zones.length && a.changes.length === changes.length;
-  const i = Math.min(state.change, Math.max(0, changes.length - 1));
+  const i = selectedOf(state);
   const lever = leverOf(state);
   const shared = sharedOf(state.edit ? state.doc.line : line);
   const findings = ready ? a.findings.filter((x) => x.change_index === i) : [];

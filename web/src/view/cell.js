@@ -43,7 +43,7 @@ export function cell(state, act) {
   return h('main', { id: 'main', class: 'cell-view', 'aria-label': `${finding.change} in ${finding.zone}` },
     laptop ? others(state, act, finding, row, column, lever, k, back) : null,
     h('article', { class: 'one-cell', 'data-key': 'article' },
-      h('div', { class: 'where' }, laptop ? null : back, h('span', { class: 'q' }, [line.name, line.readings_note].filter(Boolean).join('; ')),
+      h('div', { class: 'where' }, laptop ? null : back, h('span', { class: 'q' }, line.name),
         h('span', { class: 'steps' },
           steps[0] ? button(`‹ ${steps[0].zone_index + 1} ${steps[0].zone}`, () => act.openCell(/** @type {Finding} */ (steps[0]).zone_index, at.change), 'text', { 'aria-label': `Zone before, ${steps[0].zone}` }) : null,
           steps[1] ? button(`${steps[1].zone_index + 1} ${steps[1].zone} ›`, () => act.openCell(/** @type {Finding} */ (steps[1]).zone_index, at.change), 'text', { 'aria-label': `Next zone, ${steps[1].zone}` }) : null,
@@ -52,7 +52,7 @@ export function cell(state, act) {
       h('p', { class: 'eqline' }, h('b', null, `${finding.wish === 'avoid' ? 'Avoid' : 'Want'}: `), equation(finding.equation), '. ', judged(finding), changesOf(line)[at.change]?.tolerated ? ' The site tolerates it.' : ''),
       h('div', { class: 'picks' }, leverPick(state, act), doubtPick(state, act), h('span', { class: `standing s-${st.tone}` }, chipMark(finding.standing), `${st.word}: ${st.meaning}`)),
       bigGauge(document, { figure, before: before ? figureOf(before, lever) : null, beforeWord: beforeWord(state), standing: finding.standing, lever, width: wideWidth, k }),
-      finding.standing === 'no data' ? noData(finding, act, at) : h('div', { class: 'two' },
+      finding.standing === 'no data' ? noData(finding, act, at) : h('div', { class: 'halves' },
         levers(state, act, finding),
         doubt(finding, lev, k),
         remedies(state, act, finding),
@@ -127,7 +127,7 @@ function doubt(finding, lev, k) {
   // Shares are rounded so that they add up to 100.
   const shown = wholes(main.map((b) => b.share));
   return h('section', { class: 'doubt', 'data-key': 'doubt' },
-    h('h2', null, 'Doubt ', h('small', null, `u = ${[lev?.u != null ? `${withUnit(number(lev.u, 2), difference(lev.unit))} of ${lowerLabel(lev.label)}` : '', finding.u_dG_kJ === null ? '' : withUnit(number(finding.u_dG_kJ, 3), 'kJ')].filter(Boolean).join(', ')}; k = ${k}`)),
+    h('h2', null, 'Doubt ', h('small', null, `u = ${[lev?.u != null ? `${withUnit(number(lev.u, 2), difference(lev.unit))} of ${lowerLabel(lev.label)}` : '', finding.u_dG_kJ === null ? '' : withUnit(number(finding.u_dG_kJ, 3), 'kJ')].filter(Boolean).join(', ')}; k\u00a0=\u00a0${k}`)),
     h('ol', { class: 'bars' }, main.map((b, i) => h('li', null, h('span', { class: 'q' }, say(b.source.replace(`, ${finding.zone}`, ''))), h('span', { class: 'bartrack', 'aria-hidden': 'true' }, h('i', { css: `width:${((b.share / most) * 100).toFixed(1)}%` })), h('b', null, withUnit(String(shown[i]), '%'))))),
     rest > 0 ? h('p', { class: 'note q' }, `${rest} more below half a per cent.`) : null,
     h('p', { class: 'note' }, finding.chance_wrong === null ? null : ['Chance that the sign is wrong: ', h('b', null, chance(finding.chance_wrong)), '. '], finding.measure_next ? say(finding.measure_next) : 'Nothing more to measure here: the doubt does not decide.'));

@@ -36,8 +36,8 @@ function record(state, act, sub, f) {
   const low = Math.min(...set.phases.map((p) => p.from_K));
   const high = Math.max(...set.phases.map((p) => p.to_K));
   const at = state.readTemperature !== null && state.readTemperature >= low && state.readTemperature <= high ? state.readTemperature : Math.min(Math.max(1000, low), high);
-  const room = f.phone ? f.width : Math.min(f.tablet ? f.width : f.width - 228 + 24, 1000);
-  const w = f.phone ? room : Math.floor((room - 40) / 3);
+  const room = f.phone ? f.width : Math.min(f.tablet ? f.width : f.width - 230, 1000);
+  const w = f.phone ? room : Math.floor((room - 44) / 3);
   const kinds = /** @type {[string, 'Cp_J_per_K' | 'H_minus_H298_kJ' | 'G_kJ'][]} */ ([['Cp, J/(mol K)', 'Cp_J_per_K'], ['H − H(298), kJ/mol', 'H_minus_H298_kJ'], ['G, kJ/mol', 'G_kJ']]);
   const used = usedBy(state, sub.formula);
   return [
