@@ -46,6 +46,57 @@ struct Teller<'a> {
     line: &'a Line,
     ground: Ground<'a>,
     assessed: &'a Assessed,
+    /// What each zone's other readings are held at, written once.
+    held: Vec<Held>,
+}
+
+/// Readings of a zone in words, for what a lever holds.
+#[derive(Default)]
+struct Held {
+    pressure: String,
+    inputs: Vec<Option<String>>,
+}
+
+impl Held {
+    fn new(zone: &LineZone, gas: &ZoneGas) -> Self {
+        let inputs = gas.intake.inputs.iter().map(|input| {
+            let lever = input.lever.as_deref()?;
+            let name = if lever == "dew_point" { input.label.as_str() } else { lever };
+            Some(alloc::format!("{name} {}", words::value(input.quantity.given, input.quantity.unit)))
+        });
+        Self { pressure: words::value(zone.pressure.given, zone.pressure.unit), inputs: inputs.collect() }
+    }
+
+    /// What was held while a lever was turned.
+    fn for_lever(&self, what: &What, temperature: &str, balance: Option<&str>) -> String {
+        let mut text = String::new();
+        let mut add = |part: &str| {
+            if !text.is_empty() {
+                text.push_str(", ");
+            }
+            text.push_str(part);
+        };
+        if *what != What::Temperature {
+            add(temperature);
+        }
+        if *what != What::Pressure {
+            add(&self.pressure);
+        }
+        let own = match what {
+            What::DewPoint(i) | What::Gas(i, _) => Some(*i),
+            _ => None,
+        };
+        for (i, part) in self.inputs.iter().enumerate() {
+            if let Some(part) = part.as_ref().filter(|_| own != Some(i)) {
+                add(part);
+            }
+        }
+        if let (What::Gas(..), Some(balance)) = (what, balance) {
+            add(balance);
+            text.push_str(" gives way");
+        }
+        text
+    }
 }
 
 /// Assesses a line and tells what was found.
@@ -53,7 +104,13 @@ pub(crate) fn assess(book: &Book, shift: &Shift, line: &Line) -> Assessment {
     let assessed = leeway_findings::assess(book, shift, line);
     let charge = leeway_findings::activity::Charge::new(&line.charge);
     let ground = Ground { book, shift, charge: &charge, k: line.coverage_factor };
-    let teller = Teller { book, line, ground, assessed: &assessed };
+    let held = line
+        .zones
+        .iter()
+        .zip(&assessed.gases)
+        .map(|(zone, gas)| gas.as_ref().map_or_else(|_| Held::default(), |(gas, _)| Held::new(zone, gas)))
+        .collect();
+    let teller = Teller { book, line, ground, assessed: &assessed, held };
     let findings: Vec<Finding> = assessed.findings.iter().map(|f| teller.finding(f)).collect();
     Assessment {
         line: line.name.clone(),
@@ -303,7 +360,10 @@ impl Teller<'_> {
         answer.leeway_u = outcome.leeway_u();
         answer.chance_wrong = Some(outcome.chance_wrong());
         answer.nonlinear = outcome.read.doubt.nonlinear;
-        answer.levers = outcome.levers.iter().map(|l| self.lever(case, outcome, l, on_side)).collect();
+        let temperature = words::celsius(outcome.place.t_k);
+        let balance = case.gas.intake.balance.as_deref();
+        let held = |what: &What| self.held[answer.zone_index].for_lever(what, &temperature, balance);
+        answer.levers = outcome.levers.iter().map(|l| self.lever(case, outcome, l, on_side, &held)).collect();
         answer.budget = budget(case, outcome);
         answer.measure_next = measure_next(case, outcome, self.ground.k);
         answer.remedies = outcome
@@ -403,12 +463,19 @@ impl Teller<'_> {
         answer.notes.extend(beside_note(self.book, reaction));
     }
 
-    fn lever(&self, case: &Case, outcome: &Outcome, lever: &leeway_findings::lever::Lever, on_side: bool) -> Lever {
+    fn lever(
+        &self,
+        case: &Case,
+        outcome: &Outcome,
+        lever: &leeway_findings::lever::Lever,
+        on_side: bool,
+        held: &dyn Fn(&What) -> String,
+    ) -> Lever {
         let surface = case.gas.intake.dew_surface();
         let label = words::lever_label(&lever.what, surface);
         let z = outcome.leeway_u();
         let fails_above = lever.fails_above(on_side);
-        let held = held(case, outcome, &lever.what);
+        let held = held(&lever.what);
         let why_not = match (&lever.what, lever.turning.is_empty()) {
             (_, true) => alloc::format!(
                 "no turn from {} to {}",
@@ -570,6 +637,8 @@ impl Teller<'_> {
             Wish::Avoid => alloc::format!("{} in {}", name(c), words::list(zones)),
             Wish::Want => alloc::format!("{}: not in {}", name(c), words::list(zones)),
         };
+        let nothing =
+            if counts.off_side > 0 { "Nothing is off side but what the site tolerates" } else { "Nothing is off side" };
         let sentence = if self.line.zones.is_empty() {
             "No zone yet.".to_string()
         } else if findings.is_empty() {
@@ -599,18 +668,18 @@ impl Teller<'_> {
                 .map(|(c, zones)| alloc::format!("{} in {}", name(*c), words::list(zones)))
                 .collect();
             let more = if groups.len() > 2 { alloc::format!(" ({} more)", groups.len() - 2) } else { String::new() };
-            alloc::format!("Nothing is off side; too close to call: {}{more}.", parts.join("; "))
+            alloc::format!("{nothing}; too close to call: {}{more}.", parts.join("; "))
         } else {
             let nearest = findings
                 .iter()
                 .filter(|f| f.standing == "on side" && !tolerated(f))
                 .min_by(|a, b| a.leeway_u.unwrap_or(f64::MAX).total_cmp(&b.leeway_u.unwrap_or(f64::MAX)));
             match nearest {
-                Some(f) => alloc::format!("Nothing is off side. The nearest: {}.", words::lower_first(&f.sentence)),
+                Some(f) => alloc::format!("{nothing}. The nearest: {}.", words::lower_first(&f.sentence)),
                 None if counts.no_data == findings.len() => {
                     "No finding: the data or readings do not reach.".to_string()
                 }
-                None => "Nothing is off side.".to_string(),
+                None => alloc::format!("{nothing}."),
             }
         };
         let remedy = worst.and_then(|w| {
@@ -674,34 +743,6 @@ fn judged_why(why: Why) -> String {
         ),
         Why::TooCold => "the hot end: the whole course is below the temperature it acts above".to_string(),
     }
-}
-
-fn held(case: &Case, outcome: &Outcome, what: &What) -> String {
-    let mut parts: Vec<String> = Vec::new();
-    if *what != What::Temperature {
-        parts.push(words::celsius(outcome.place.t_k));
-    }
-    if *what != What::Pressure {
-        parts.push(words::value(case.zone.pressure.given, case.zone.pressure.unit));
-    }
-    for input in &case.gas.intake.inputs {
-        let own = match what {
-            What::DewPoint(i) | What::Gas(i, _) => core::ptr::eq(input, &raw const case.gas.intake.inputs[*i]),
-            _ => false,
-        };
-        if !own && input.lever.is_some() {
-            let name = if input.lever.as_deref() == Some("dew_point") {
-                input.label.clone()
-            } else {
-                input.lever.clone().unwrap_or_default()
-            };
-            parts.push(alloc::format!("{name} {}", words::value(input.quantity.given, input.quantity.unit)));
-        }
-    }
-    if let (What::Gas(..), Some(balance)) = (what, &case.gas.intake.balance) {
-        parts.push(alloc::format!("{balance} gives way"));
-    }
-    parts.join(", ")
 }
 
 fn budget(case: &Case, outcome: &Outcome) -> Vec<Share> {

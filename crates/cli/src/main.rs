@@ -6,9 +6,9 @@ mod paper;
 
 use args::{Args, Colour, Command};
 use clap::Parser;
-use leeway_api::Session;
 use leeway_api::request::ChangeRequest;
 use leeway_api::response::{Assessment, Problem};
+use leeway_api::{Opened, Session};
 use paper::Paper;
 use serde::Serialize;
 use std::io::{IsTerminal, Write};
@@ -81,11 +81,14 @@ fn run(command: &Command, colour: bool) -> Result<Answer, Vec<Problem>> {
     let mut paper = Paper::new(colour);
     match command {
         Command::Assess { line, json, strict, variant, zone, change } => {
-            let mut text = line_text(&session, line)?;
+            let opened = open(&session, line)?;
+            let mut text = opened.text;
             if let Some(name) = variant {
                 text = session.variant(&text, name).map_err(one)?;
             }
-            let assessment = session.assess(&text).map_err(one)?;
+            let mut assessment = session.assess(&text).map_err(one)?;
+            // What was noticed of the bytes; what was noticed of the line the assessment says itself.
+            assessment.notes.extend(opened.notes.into_iter().filter(|n| n.at.is_empty()));
             let refused = refused(&assessment);
             known_name(zone.as_deref(), assessment.zones.iter().map(|z| z.name.as_str()), "zone").map_err(one)?;
             known_name(change.as_deref(), assessment.changes.iter().map(|c| c.name.as_str()), "change").map_err(one)?;
@@ -117,7 +120,7 @@ fn run(command: &Command, colour: bool) -> Result<Answer, Vec<Problem>> {
             Ok(Answer::done(paper.into_text()))
         }
         Command::Propose { line, json } => {
-            let proposals = session.propose(&line_text(&session, line)?).map_err(one)?;
+            let proposals = session.propose(&open(&session, line)?.text).map_err(one)?;
             if *json {
                 return Ok(Answer::done(as_json(&proposals)?));
             }
@@ -149,9 +152,9 @@ fn run(command: &Command, colour: bool) -> Result<Answer, Vec<Problem>> {
     }
 }
 
-fn line_text(session: &Session, path: &Path) -> Result<String, Vec<Problem>> {
+fn open(session: &Session, path: &Path) -> Result<Opened, Vec<Problem>> {
     let bytes = files::read(path).map_err(|p| vec![p])?;
-    session.open(&bytes).map(|opened| opened.text).map_err(|p| vec![p])
+    session.open(&bytes).map_err(|p| vec![p])
 }
 
 /// Everything a line could not be taken for.

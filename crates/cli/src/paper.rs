@@ -48,7 +48,8 @@ fn short(x: f64) -> String {
     } else {
         // Five significant digits, so that 1.025 bar stays 1.025 bar; below 1e-3 the exponent form is taken.
         let whole = (0..6).take_while(|n| size >= f64::from(10u32.pow(*n))).count();
-        let decimals = if whole > 0 { 5usize.saturating_sub(whole) } else { 7 };
+        let zeros = (1..3).take_while(|n| size < 1.0 / f64::from(10u32.pow(*n))).count();
+        let decimals = if whole > 0 { 5usize.saturating_sub(whole) } else { 5 + zeros };
         let text = format!("{x:.decimals$}");
         if text.contains('.') { text.trim_end_matches('0').trim_end_matches('.').to_owned() } else { text }
     };

@@ -259,6 +259,14 @@ fn bad_changes_are_named_with_their_mend() {
 }
 
 #[test]
+fn a_byte_order_mark_is_said_and_does_not_matter() {
+    let marked = [&[0xef, 0xbb, 0xbf], LINE.as_bytes()].concat();
+    let (code, out, err) = piped(&["assess", "-"], &marked);
+    assert_eq!((code, err.as_str()), (0, ""));
+    assert!(out.contains("byte order mark"), "{out}");
+}
+
+#[test]
 fn words_that_are_no_command_are_bad_input() {
     for args in [&[][..], &["asses"], &["assess"], &["assess", "-", "--color", "pink"], &["change", "a = b", "--bt"]] {
         let (code, out, err) = run(args);
