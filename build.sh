@@ -70,7 +70,7 @@ wasm() {
 page() {
   say "One page with everything inside"
   mkdir -p "$DIST"
-  node web/build.mjs --wasm "$BUILD" --lines tests/lines --out "$DIST/leeway.html"
+  node web/build.mjs --wasm "$BUILD" --lines tests/lines --licences "$DIST/THIRD-PARTY-LICENCES.txt" --out "$DIST/leeway.html"
   local size
   size=$(stat -c %s "$DIST/leeway.html")
   [ "$size" -le "$PAGE_LIMIT" ] || stop "the page has $size bytes, at most $PAGE_LIMIT are allowed"
@@ -105,9 +105,9 @@ build() {
   page_tools
   debian zip zip
   wasm
+  licences
   page
   shell_command
-  licences
   zip_folder
 }
 

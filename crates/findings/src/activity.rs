@@ -71,6 +71,8 @@ pub enum Missing {
 #[derive(Debug, Clone, PartialEq, Default)]
 pub struct Charge {
     members: Vec<(String, Option<f64>, Option<Activity>)>,
+    /// Elements among the members: together they are one alloy.
+    elements: Vec<String>,
 }
 
 fn formula_of(text: &str) -> String {
@@ -91,13 +93,19 @@ impl Charge {
                 (formula, n)
             })
             .collect();
+        let elements: Vec<String> = moles
+            .iter()
+            .map(|(f, _)| f)
+            .filter(|f| Formula::parse(f).is_ok_and(|f| f.single_element().is_some()))
+            .cloned()
+            .collect();
         let total: f64 = moles.iter().filter_map(|(_, n)| *n).sum();
         let members = moles
             .into_iter()
             .zip(members)
             .map(|((formula, n), m)| (formula, n.filter(|_| total > 0.0).map(|n| n / total), m.activity.clone()))
             .collect();
-        Self { members }
+        Self { members, elements }
     }
 
     /// Formulas of the charge, in the file's order.
@@ -148,7 +156,6 @@ impl Charge {
 
     /// Whether the formula is an element of an alloy of at least two.
     fn is_dissolved(&self, formula: &str) -> bool {
-        let element = |f: &str| Formula::parse(f).is_ok_and(|f| f.single_element().is_some());
-        element(formula) && self.members.iter().filter(|(f, _, _)| element(f)).count() > 1
+        self.elements.len() > 1 && self.elements.iter().any(|e| e == formula)
     }
 }

@@ -82,7 +82,9 @@ pub fn remedies(case: &Case, outcome: &Outcome, sweeps: &[Sweep]) -> Vec<Remedy>
 fn at_level(case: &Case, outcome: &Outcome, sweep: Option<&Sweep>, level_kj: f64) -> Vec<f64> {
     let signed_level = outcome.sign * level_kj;
     match sweep {
-        Some(sweep) => sweep.crossings(case, outcome, &at_reading(case, outcome), signed_level).iter().map(|c| c.at).collect(),
+        Some(sweep) => {
+            sweep.crossings(case, outcome, &at_reading(case, outcome), signed_level).iter().map(|c| c.at).collect()
+        }
         None => {
             let reaction = case.reaction(&outcome.bound);
             reaction.turning(case.ground.book, outcome.ln_q, signed_level).iter().map(|c| c.at).collect()
@@ -135,7 +137,10 @@ fn faster(case: &Case, outcome: &Outcome) -> Option<Remedy> {
     let hot = case.zone.temperature.value.max(case.zone.leaving.as_ref()?.value);
     let needed = |t: f64| q.unit.from_internal((t - floor_k) / seconds);
     let above = |level: f64| {
-        at_level(case, outcome, None, level).into_iter().filter(|t| *t > outcome.place.t_k && *t <= hot).min_by(f64::total_cmp)
+        at_level(case, outcome, None, level)
+            .into_iter()
+            .filter(|t| *t > outcome.place.t_k && *t <= hot)
+            .min_by(f64::total_cmp)
     };
     let turn = if outcome.leeway_kj() < 0.0 { above(0.0)? } else { outcome.place.t_k };
     let mut level = case.ground.k * outcome.read.doubt.u_kj;
