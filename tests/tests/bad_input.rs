@@ -256,6 +256,9 @@ fn entries() {
         ("an activity with a unit", "activity", "0.25 bar"),
         ("a tolerance below zero", "tolerance", "-1"),
         ("a cell in amperes", "oxygen_cell", "1136 mA"),
+        ("a cell in volts for millivolts", "oxygen_cell", "1136 V"),
+        ("a temperature of no furnace", "temperature", "1e30 C"),
+        ("a pressure of no vessel", "pressure", "1e30 bar"),
         ("a field that is none", "colour", "1"),
         (
             "too long",

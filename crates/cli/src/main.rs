@@ -58,8 +58,13 @@ fn bad_input(file: &str, problems: &[Problem]) -> ExitCode {
 /// Writes to standard output; a reader that went away is no fault of ours.
 fn write_out(text: &str, code: u8) -> ExitCode {
     let mut out = std::io::stdout().lock();
-    let _ = out.write_all(text.as_bytes()).and_then(|()| out.flush());
-    ExitCode::from(code)
+    match out.write_all(text.as_bytes()).and_then(|()| out.flush()) {
+        Err(e) if e.kind() != std::io::ErrorKind::BrokenPipe => {
+            let _ = writeln!(std::io::stderr(), "leeway: standard output takes no more: {e}");
+            ExitCode::from(BAD_INPUT)
+        }
+        _ => ExitCode::from(code),
+    }
 }
 
 /// What goes to standard output, and what of a line could not be taken: the rest of it is judged all the same.

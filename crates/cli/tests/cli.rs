@@ -308,6 +308,17 @@ fn colour_is_a_choice() {
     );
 }
 
+/// A device that is always full stands for a full disk.
+#[test]
+#[cfg(target_os = "linux")]
+fn a_full_disk_is_said() {
+    let full = std::fs::File::options().write(true).open("/dev/full").expect("the device");
+    let output = command(&["substances"]).stdout(full).output().expect("starts");
+    let err = String::from_utf8(output.stderr).expect("UTF-8");
+    assert_eq!(output.status.code(), Some(2), "{err}");
+    assert!(err.contains("standard output takes no more"), "{err}");
+}
+
 #[test]
 fn a_closed_pipe_is_no_fault() {
     let path = demo_lines().remove(0);

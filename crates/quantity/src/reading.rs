@@ -24,7 +24,7 @@ pub enum QuantityError {
         found: f64,
     },
     /// The value is outside what the kind of quantity allows.
-    #[error("found {found} {unit}, expected {expected}")]
+    #[error("found {} {unit}, expected {expected}", figure(*found))]
     OutOfBounds {
         /// The value found, in its unit.
         found: f64,
@@ -33,6 +33,11 @@ pub enum QuantityError {
         /// What is allowed, in words.
         expected: &'static str,
     },
+}
+
+/// A number as typed, a huge one by its exponent: nobody reads thirty zeros.
+fn figure(x: f64) -> alloc::string::String {
+    if x.abs() < 1e9 { alloc::format!("{x}") } else { alloc::format!("{x:e}") }
 }
 
 /// A reading: value, unit as given, standard uncertainty.
@@ -54,8 +59,9 @@ impl Quantity {
     /// Makes a quantity from a value in `unit`, without tolerance.
     ///
     /// # Errors
-    /// [`QuantityError`] for a value that is not finite, a temperature at or below 0 K, a pressure not
-    /// above 0, a fraction below 0 or above 1.03 (the largest sum of an analysis that is taken).
+    /// [`QuantityError`] for a value that is not finite, a temperature at or below 0 K or above
+    /// 100 000 K, a pressure below 0 or above 100 000 bar, a voltage beyond 5 V, a time below 0, a rate not above
+    /// 0, a fraction below 0 or above 1.03 (the largest sum of an analysis that is taken).
     pub fn new(value: f64, unit: Unit) -> Result<Self, QuantityError> {
         if !value.is_finite() {
             return Err(QuantityError::NotFinite { found: value });
@@ -63,6 +69,9 @@ impl Quantity {
         let internal = unit.to_internal(value);
         let expected = match unit.kind() {
             crate::Kind::Temperature if internal <= 0.0 => Some("a temperature above 0 K (-273.15 C)"),
+            crate::Kind::Temperature if internal > 1e5 => Some("a temperature below 100 000 K"),
+            crate::Kind::Pressure if internal > 1e5 => Some("a pressure below 100 000 bar"),
+            crate::Kind::Voltage if internal.abs() > 5.0 => Some("a cell voltage within 5 V"),
             crate::Kind::Pressure if internal < 0.0 => Some("a pressure of 0 or more"),
             crate::Kind::Fraction if internal < 0.0 => Some("a share of 0 or more"),
             crate::Kind::Fraction if internal > 1.03 => Some("a share of at most 103 %"),
