@@ -187,6 +187,16 @@ async function propose() {
   if (!answer.stale) set((s) => ({ ...s, proposals: 'answer' in answer ? answer.answer : [] }));
 }
 
+/** What the keypad would cover is brought into sight: the zone being changed and its first gauges. */
+function inSight() {
+  const below = document.querySelector('.pad.below')?.getBoundingClientRect();
+  const open = document.querySelector('.chip.open')?.getBoundingClientRect();
+  if (!open) return;
+  if (below && open.bottom > below.top - 8) window.scrollBy(0, open.bottom - below.top + 120);
+  const beside = document.querySelector('.pad.beside')?.getBoundingClientRect();
+  if (beside && beside.bottom > window.innerHeight) window.scrollBy(0, Math.min(beside.bottom - window.innerHeight + 8, Math.max(0, open.top - 8)));
+}
+
 /** A place to go back to, so that the browser's own Back leaves a cell. @param {State} s @param {string} view @returns {State} */
 const viewed = (s, view) => ({ ...s, view, panel: null, menu: null });
 
@@ -225,15 +235,8 @@ export const act = {
       const input = /** @type {HTMLInputElement | null} */ (document.querySelector('#pad-input'));
       input?.focus({ preventScroll: true });
       input?.select();
-      // What the keypad would cover is brought into sight: the zone being changed and its first gauges.
-      const pad = document.querySelector('.pad.below')?.getBoundingClientRect();
-      const open = document.querySelector('.chip.open')?.getBoundingClientRect();
-      if (pad && open && open.bottom > pad.top - 8) window.scrollBy(0, open.bottom - pad.top + 120);
-      const beside = document.querySelector('.pad.beside');
-      const box = beside?.getBoundingClientRect();
-      if (box && box.bottom > window.innerHeight) window.scrollBy(0, Math.min(box.bottom - window.innerHeight + 8, Math.max(0, (open?.top ?? 0) - 8)));
     }));
-    void understand();
+    void understand().then(() => requestAnimationFrame(() => requestAnimationFrame(inSight)));
   },
   /** @param {string} text */
   type: (text) => typed({ text }),

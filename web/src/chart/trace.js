@@ -150,7 +150,7 @@ export function trace(doc, { bays, change, charge, width, height, label: L, befo
     return true;
   };
   const put = (/** @type {[number, number][]} */ places, /** @type {string} */ words, /** @type {string} */ cls) => {
-    const len = words.length * 7;
+    const len = words.length * (cls.startsWith('b') ? 8 : 7.3);
     for (const [px, py] of places) {
       const at = Math.min(px, W - len - 2);
       if (free(at, py, len)) return out.push(text(at, py, words, cls));
@@ -163,13 +163,19 @@ export function trace(doc, { bays, change, charge, width, height, label: L, befo
     return { x: bx(i) + u * w, y: y(t), t, b, i };
   });
   for (const d of dots) taken.push([d.x - 12, d.y - 12, d.x + 12, d.y + 12]);
+  bays.forEach((b, i) => {
+    if (b.to === null) taken.push([bx(i) + w * 0.2, y(b.from) - 4, bx(i + 1) - w * 0.2, y(b.from) + 4]);
+    else for (let j = 0; j < 12; j += 1) taken.push([bx(i) + (w * j) / 12, y(b.from + ((b.to - b.from) * (j + 0.5)) / 12) - 5, bx(i) + (w * (j + 1)) / 12, y(b.from + ((b.to - b.from) * (j + 0.5)) / 12) + 5]);
+  });
+  for (const r of runs) taken.push([r.a, r.v - 1, r.b, r.v + 1]);
   const longest = [...runs].sort((a, b) => b.b - b.a - (a.b - a.a))[0];
   for (const r of longest ? [longest, ...runs.filter((q) => q !== longest)] : []) {
     const where = celsius(r.at + ZERO);
     const long = `${change} turns at ${where}`;
-    const words = r === longest && long.length * 7 < r.b - r.a - 12 ? long : where;
+    const words = r === longest && long.length * 8 < r.b - r.a - 12 ? long : where;
     const dy = r.off === 'below' ? [r.v + 28, r.v - 6] : [r.v - 18, r.v + 17];
-    const xs = [r.a + 8, r.b - words.length * 7 - 8, r.a + (r.b - r.a) / 2 - words.length * 3.5];
+    const size = words.length * 8;
+    const xs = [r.a + 8, r.b - size - 8, r.a + (r.b - r.a) / 2 - size / 2, r.a + (r.b - r.a) / 4, r.a + (r.b - r.a) * 0.7 - size / 2].filter((px) => px + size <= r.b + 4 || r !== longest);
     put(xs.flatMap((px) => dy.map((py) => /** @type {[number, number]} */ ([px, py]))), words, 'b halo');
   }
   for (const d of dots) if (d.b.finding && d.b.to !== null) put([[d.x + 10, d.y - 12], [d.x - 130, d.y + 16], [d.x + 12, d.y + 18]], w < 150 ? celsius(d.t + ZERO) : `judged at ${celsius(d.t + ZERO)}`, 'halo');

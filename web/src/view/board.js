@@ -86,7 +86,7 @@ function chipText(q, target) {
   switch (target.kind) {
     case 'gas': return target.field === 'oxygen_cell' ? { big: v, small: `cell ${tolerance}` } : { big: v, small: `${q.over === 'water' ? 'dew' : dewName(q) === 'Frost point' ? 'frost' : 'dew'} ${tolerance}` };
     case 'channel': return { big: `${formulas(target.key ?? '')} ${q.bound === 'upper' ? '< ' : ''}${v}`, small: q.bound === 'upper' ? 'detection limit' : `${tolerance}${q.basis ? ` ${q.basis}` : ''}` };
-    case 'zone': return target.field === 'leaving' ? { big: `to ${v}`, small: tolerance } : { big: v, small: target.field === 'rate' ? `rate ${tolerance}` : tolerance };
+    case 'zone': return target.field === 'leaving' ? { big: `to ${v}`, small: tolerance } : { big: v, small: tolerance };
     default: return { big: v, small: tolerance };
   }
 }
@@ -105,7 +105,7 @@ function chip(state, act, target, under) {
     type: 'button', class: `chip${changed ? ' changed' : ''}${isOpen ? ' open' : ''}`, 'data-key': `chip-${target.kind}-${target.field}-${target.key ?? ''}-${target.zones.join('.')}`,
     'aria-label': `${place}${target.label} ${big}, ${small}${changed ? `, was ${value(was.value, was.unit)}` : ''}. Change`, 'aria-expanded': isOpen ? 'true' : null,
     onclick: () => act.startEdit(target),
-  }, h('b', null, changed ? h('s', null, was.unit === q.unit ? reading(was.value) : value(was.value, was.unit)) : null, big), h('span', null, under ?? small));
+  }, h('b', null, big), h('span', null, changed ? h('s', null, was.unit === q.unit ? reading(was.value) : value(was.value, was.unit)) : null, changed ? (under ?? small).replace(/ ?±.*$/, '') : under ?? small));
 }
 
 /** @param {Target} a @param {Target} b */

@@ -47,7 +47,11 @@ export function pad(state, act, { f, col, n }) {
     const most = 640;
     if (zone === null) css = `right:0;width:${Math.min(most, n * col - 20)}px`;
     else if (right >= left || right >= 520) css = `left:${(f.label + (z + 1) * col).toFixed(0)}px;width:${Math.max(430, Math.min(most, right)).toFixed(0)}px`;
-    else css = `left:${Math.max(0, left - most).toFixed(0)}px;width:${Math.max(430, Math.min(most, left)).toFixed(0)}px`;
+    else {
+      // The names of the rows stay in sight where the columns before the zone leave room.
+      const wide = Math.max(430, Math.min(most, left - f.label));
+      css = `left:${Math.max(0, left - wide).toFixed(0)}px;width:${wide.toFixed(0)}px`;
+    }
   }
   return h('div', {
     class: `pad${beside ? ' beside' : ' below'}`, css, role: 'dialog', 'aria-label': `${zone === null ? 'All zones' : zones[zone].name}: ${target.label}`, 'data-key': 'pad',
@@ -62,7 +66,8 @@ export function pad(state, act, { f, col, n }) {
     h('button', { type: 'button', class: 'tol', onclick: () => act.press('±'), 'aria-label': `Tolerance ${tolerance}: type another` }, h('span', null, 'tolerance'), h('b', null, tolerance))),
   h('div', { class: 'readback', 'aria-live': 'polite' },
     problem ? trouble(problem, (text) => act.type(text)) : entry ? [h('p', null, h('b', null, `${say(entry.read_back)}${entry.consequence ? ':' : '.'} `), entry.consequence ? h('span', null, `${say(entry.consequence)}.`) : null), refused ? trouble(refused) : null] : null,
-    h('p', { class: 'q' }, problem ? 'The gauges still show the value before.' : `${others}`)),
+    h('p', { class: 'q' }, problem ? 'The gauges still show the value before.' : `${others}`),
+    h('p', { class: 'hint' }, h('b', null, 'Enter'), ' keeps, ', h('b', null, 'Esc'), ' takes back. ', EXAMPLES[field] ?? '')),
   h('div', { class: 'keys' }, key('7'), key('8'), key('9'), key('⌫', 'Delete the last sign'), key('4'), key('5'), key('6'), key('−', 'Minus'), key('1'), key('2'), key('3'), key('±', 'Plus or minus, a tolerance'), key('0', '0', 'two'), key(',', 'Comma'), key('.', 'Point')),
   h('div', { class: 'units' },
     units.map((u) => h('button', { type: 'button', class: shownUnit === u ? 'set' : '', 'aria-pressed': String(shownUnit === u), onclick: () => act.unit(u) }, unit(u))),
@@ -70,6 +75,5 @@ export function pad(state, act, { f, col, n }) {
     field === 'gas' ? h('button', { type: 'button', class: `w${entry?.quantity?.bound === 'upper' ? ' set' : ''}`, 'aria-pressed': String(entry?.quantity?.bound === 'upper'), onclick: () => act.bound() }, 'detection limit') : null),
   h('div', { class: 'act' },
     button(old ? `Take back ${reading(old.value)}` : 'Leave it', act.takeBack, ''),
-    h('button', { type: 'button', class: 'main', onclick: act.keep, disabled: !edit.tentative }, keep)),
-  h('p', { class: 'hint' }, h('b', null, 'Enter'), ' keeps, ', h('b', null, 'Esc'), ' takes back. ', EXAMPLES[field] ?? ''));
+    h('button', { type: 'button', class: 'main', onclick: act.keep, disabled: !edit.tentative }, keep)));
 }
