@@ -8,7 +8,8 @@ type Edges = BTreeMap<String, BTreeSet<String>>;
 /// Edges of the drawing: the fenced block that begins with `rooms`.
 fn drawn() -> Edges {
     let text = leeway_tests::text("../DEVELOPERS.md");
-    let block = text.split("```rooms\n").nth(1).expect("a block ```rooms in DEVELOPERS.md").split("```").next().unwrap_or("");
+    let block =
+        text.split("```rooms\n").nth(1).expect("a block ```rooms in DEVELOPERS.md").split("```").next().unwrap_or("");
     block
         .lines()
         .filter_map(|line| line.split_once(':'))
@@ -61,7 +62,9 @@ fn the_computation_knows_no_json() {
     let (_, meta) = manifests();
     for package in meta["packages"].as_array().expect("packages") {
         let name = package["name"].as_str().unwrap_or("");
-        if !["leeway-quantity", "leeway-substances", "leeway-reactions", "leeway-gas", "leeway-findings"].contains(&name) {
+        if !["leeway-quantity", "leeway-substances", "leeway-reactions", "leeway-gas", "leeway-findings"]
+            .contains(&name)
+        {
             continue;
         }
         for d in package["dependencies"].as_array().expect("dependencies") {

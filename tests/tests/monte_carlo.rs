@@ -109,7 +109,9 @@ fn first_order_doubt_agrees_with_draws() {
             if (f.zone + f.change) % 3 != 0 {
                 continue;
             }
-            let (Ok(outcome), Ok(compiled), Ok((gas, _))) = (&f.outcome, &found.changes[f.change], &found.gases[f.zone]) else {
+            let (Ok(outcome), Ok(compiled), Ok((gas, _))) =
+                (&f.outcome, &found.changes[f.change], &found.gases[f.zone])
+            else {
                 continue;
             };
             let case = Case { ground, zone: &line.zones[f.zone], change: &line.changes[f.change], compiled, gas };
@@ -126,7 +128,11 @@ fn first_order_doubt_agrees_with_draws() {
                     if doubt.nonlinear {
                         flagged += 1;
                     } else {
-                        assert!(off.abs() < 0.03, "{name}: first order {:.4} kJ, draws {drawn:.4} kJ, not flagged", doubt.u_kj);
+                        assert!(
+                            off.abs() < 0.03,
+                            "{name}: first order {:.4} kJ, draws {drawn:.4} kJ, not flagged",
+                            doubt.u_kj
+                        );
                         worst = worst.max(off.abs());
                     }
                     checked += 1;

@@ -320,7 +320,7 @@ impl Intake {
     #[must_use]
     pub fn unburned(&self, partial_pressures_bar: &[f64]) -> bool {
         let of = |f: &str| self.species.iter().position(|s| s == f).map_or(0.0, |i| partial_pressures_bar[i]);
-        let total: f64 = partial_pressures_bar.iter().sum();
+        let total: f64 = partial_pressures_bar[..self.species.len()].iter().sum();
         let read = self.species.iter().position(|s| s == "O2").is_some_and(|i| !self.upper_bound[i]);
         read && of("O2") > UNBURNED * total && of("H2") + of("CO") > UNBURNED * total
     }
