@@ -8,6 +8,7 @@
 set -euo pipefail
 cd "$(dirname "$0")"
 export CARGO_TERM_COLOR=${CARGO_TERM_COLOR:-never}
+export PATH="${CARGO_HOME:-$HOME/.cargo}/bin:$PATH"
 
 DIST=dist
 DEMO=tests/lines/heron-2.leeway.json
@@ -41,7 +42,7 @@ debian() {
 
 rust_tools() {
   say "Rust: target, formatter, lints and the binding tool"
-  have cargo || stop "cargo is missing: install Rust 1.95 or later"
+  if ! have cargo || ! have rustup; then stop "cargo or rustup is missing: install Rust 1.95 or later with rustup"; fi
   if rustup target list --installed | grep -qx wasm32-unknown-unknown; then note "target wasm32-unknown-unknown is there"
   else note "adding target wasm32-unknown-unknown"; rustup target add wasm32-unknown-unknown; fi
   cargo fmt --version >/dev/null 2>&1 || rustup component add rustfmt
@@ -95,7 +96,9 @@ zip_folder() {
   mkdir -p "$DIST/leeway/lines"
   cp "$DIST/leeway.html" crates/dataset/data/leeway-data.txt web/GUIDE.txt "$DIST/THIRD-PARTY-LICENCES.txt" LICENSE-MIT LICENSE-APACHE "$DIST/leeway/"
   cp tests/lines/*.leeway.json "$DIST/leeway/lines/"
-  (cd "$DIST" && zip -q -X -r leeway.zip leeway)
+  # One date and one order, so that the same files make the same zip.
+  find "$DIST/leeway" -exec touch -d 2000-01-01T00:00:00Z {} +
+  (cd "$DIST" && find leeway -type f | LC_ALL=C sort | TZ=UTC zip -q -X -@ leeway.zip)
   rm -rf "$DIST/leeway"
   note "$DIST/leeway.zip, $(stat -c %s "$DIST/leeway.zip") bytes"
 }
@@ -139,7 +142,7 @@ tests() {
   say "Formatting"
   cargo fmt --all --check
   say "Lints, warnings denied"
-  RUSTFLAGS="-D warnings" cargo clippy --quiet --workspace --all-targets -- -D warnings
+  cargo clippy --quiet --workspace --all-targets -- -D warnings
   cargo clippy --quiet --package leeway-wasm --target wasm32-unknown-unknown -- -D warnings
   say "Documentation, warnings denied"
   RUSTDOCFLAGS="-D warnings" cargo doc --quiet --workspace --no-deps

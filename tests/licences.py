@@ -56,11 +56,11 @@ def main():
             wrong.append(f"{label}: licence {licence} is not on the list")
         folder = pathlib.Path(p["manifest_path"]).parent
         files = sorted(f for f in folder.iterdir() if f.is_file() and f.name.upper().startswith(NAMES))
-        if not files and not licence:
+        if not files:
             wrong.append(f"{label}: no licence text")
         for f in files:
             texts.setdefault(f.read_text(encoding="utf-8", errors="replace").strip(), []).append(f"{label}, {f.name}")
-        lines.append(f"  {label}: {licence}" + ("" if files else " (no text in the package; the standard text of the licence holds)"))
+        lines.append(f"  {label}: {licence}")
     if wrong:
         sys.exit("licences:\n  " + "\n  ".join(wrong))
     for text, users in texts.items():
