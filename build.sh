@@ -171,6 +171,7 @@ bench() {
   debian chromium chromium
   say "Benchmarks: ratios in one run"
   (cd tests/bench && cargo bench --quiet)
+  node tests/bench/ratios.mjs
   node tests/bench/page.mjs
 }
 
