@@ -46,3 +46,12 @@ export const findings = (tab) => tab.$$eval('.row .cell[aria-label], .phone .cel
 export const heading = (tab) => tab.textContent('h1');
 /** Waits until what is shown follows what was done. */
 export const settle = (tab) => tab.evaluate(() => new Promise((done) => setTimeout(done, 120)));
+/** Asks the page until it says yes. The page's own policy forbids the ready-made way, which builds code from text. */
+export async function until(tab, asked, arg, patience = 5000) {
+  const end = performance.now() + patience;
+  for (;;) {
+    if (await tab.evaluate(asked, arg)) return;
+    if (performance.now() > end) throw new Error(`the page did not come to: ${asked} with ${JSON.stringify(arg)?.slice(0, 300)}`);
+    await new Promise((done) => setTimeout(done, 30));
+  }
+}
