@@ -64,7 +64,7 @@ export function morph(was, now) {
     if (was.data !== now.data) was.data = now.data;
     return was;
   }
-  for (const { name } of [...was.attributes]) if (!now.hasAttribute(name) && name !== 'style') was.removeAttribute(name);
+  for (const { name } of [...was.attributes]) if (!now.hasAttribute(name) && name !== 'style' && !(name === 'open' && was.nodeName === 'DETAILS')) was.removeAttribute(name);
   for (const { name, value } of [...now.attributes]) if (name !== 'style' && was.getAttribute(name) !== value) was.setAttribute(name, value);
   if (was.style && was.style.cssText !== now.style.cssText) was.style.cssText = now.style.cssText;
   for (const name of HANDLERS) if (was[name] !== now[name]) was[name] = now[name];

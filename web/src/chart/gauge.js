@@ -126,11 +126,14 @@ export function bigGauge(doc, { figure, before, beforeWord, standing: name, leve
   const to = above ? Math.min(W, hi + 12) : Math.min(T, hi + 12);
   if (to > from) out.push(s(doc, 'rect', { x: from, y: 28, width: to - from, height: 32, class: 'clear' }));
   out.push(s(doc, 'path', { d: `M0 64H${W}`, class: 'axis' }));
+  const [less, more] = ends(lever);
   const list = ticks(a, z, Math.max(3, Math.floor(W / 130)));
   list.forEach((v, i) => {
     const px = x(v);
-    if (px < 24 || px > W - 30) return;
-    out.push(s(doc, 'path', { d: `M${px.toFixed(1)} 64v6`, class: 'axis' }), s(doc, 'text', { x: px.toFixed(1), y: 83, 'text-anchor': 'middle', class: 'q' }, i === 1 || list.length < 3 ? withUnit(dressed(String(v)), unit(own)) : dressed(String(v))));
+    const words = i === 1 || list.length < 3 ? withUnit(dressed(String(v)), unit(own)) : dressed(String(v));
+    const half = words.length * 4;
+    if (px - half < 8 + less.length * 7.5 || px + half > W - 8 - more.length * 7.5) return out.push(s(doc, 'path', { d: `M${px.toFixed(1)} 64v6`, class: 'axis' }));
+    out.push(s(doc, 'path', { d: `M${px.toFixed(1)} 64v6`, class: 'axis' }), s(doc, 'text', { x: px.toFixed(1), y: 83, 'text-anchor': 'middle', class: 'q' }, words));
   });
   out.push(s(doc, 'path', { d: `M${T} 2V70`, class: 'turnline' }));
   if (old !== null && old >= a && old <= z && Math.abs(x(old) - X) > 14) {
@@ -163,7 +166,6 @@ export function bigGauge(doc, { figure, before, beforeWord, standing: name, leve
   const turnX = rightwards ? T - 10 : T + 10;
   const turnSpace = rightwards ? T : W - T;
   out.push(s(doc, 'text', { x: wide(turnLabel) < turnSpace ? turnX : rightwards ? 2 : W - 2, y: 14, 'text-anchor': wide(turnLabel) < turnSpace ? (rightwards ? 'end' : 'start') : rightwards ? 'start' : 'end', class: 'b halo' }, turnLabel));
-  const [less, more] = ends(lever);
   out.push(s(doc, 'text', { x: 0, y: 83, class: 'q halo' }, less), s(doc, 'text', { x: W, y: 83, 'text-anchor': 'end', class: 'q halo' }, more));
   const told = `${turnLabel}; reading ${turnText(reading, own)}, leeway ${says}, doubt ${turnText(bar, own === 'C' ? 'K' : own)} to each side (k${THIN}=${THIN}${k}); ${st.word}`;
   return s(doc, 'svg', { viewBox: `0 0 ${W} ${H}`, width: W, height: H, class: 'big', role: 'img', 'aria-label': told }, out);

@@ -148,12 +148,12 @@ function remedies(state, act, finding) {
   const bad = finding.standing === 'off side' || finding.standing === 'too close to call';
   const line = lineOnShow(state);
   return h('section', { class: 'wide', 'data-key': 'remedies' },
-    h('h2', null, 'What brings it back ', h('small', null, 'rounded to the safe side')),
+    h('h2', null, (finding.leeway_kJ ?? 0) >= 0 && finding.remedies.length ? 'What puts it beyond doubt ' : 'What brings it back ', h('small', null, 'rounded to the safe side')),
     !finding.remedies.length ? h('p', { class: 'note q' }, bad ? 'No lever that may be turned brings it back by itself.' : 'Nothing to bring back: it stands as you wish.') :
     h('div', { class: 'mend' }, finding.remedies.map((r, i) => {
       const target = leverTarget(line, finding.zone_index, r.lever);
       const says = value(r.beyond_doubt, r.unit);
-      return [h('p', null, h('b', null, `${i ? 'Or ' : ''}${say(i ? lowerLabel(r.sentence) : r.sentence)}`), h('small', null, `${turn(r.just_turns, r.unit)} only just turns; now ${value(Number(r.from.toPrecision(7)), r.unit)}`)),
+      return [h('p', null, h('b', null, `${i ? 'Or ' : ''}${say(i ? lowerLabel(r.sentence) : r.sentence)}`), h('small', null, (finding.leeway_kJ ?? 0) >= 0 ? `puts it beyond doubt; now ${value(Number(r.from.toPrecision(7)), r.unit)}` : `${turn(r.just_turns, r.unit)} only just turns; now ${value(Number(r.from.toPrecision(7)), r.unit)}`)),
         target ? button(`Try ${says}`, () => act.tryValue(target, `${r.beyond_doubt} ${r.unit}`, `${r.label} ${says} in ${finding.zone}`), `btn${i ? '' : ' main'}`) : h('span')];
     })));
 }

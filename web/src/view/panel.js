@@ -140,7 +140,7 @@ function zoneForm(state, act, i) {
     h('p', { class: 'q' }, 'A share is typed as 35 ppm, 1,2 % ± 0,1, < 0.1 % at the detection limit, or 12 mbar.'),
     channels.map((c) => h('div', { class: 'channel', 'data-key': `ch-${c}` },
       quantityField(state, act, { kind: 'channel', field: 'gas', key: c, label: `${formulas(c)} share`, zones: [i] }),
-      h('div', { class: 'keys order' },
+      h('div', { class: 'keys' },
         h('button', { type: 'button', class: 'btn small', onclick: () => { const q = gas.analysis?.[c]; if (q) act.edit(set({ ...zone, gas: { ...gas, analysis: { ...gas.analysis, [c]: withKey(q, 'basis', (q.basis ?? gas.basis) === 'wet' ? 'dry' : 'wet') } } }), `${c} basis`, { field: `basis-${i}` }); }, 'aria-label': `${c} is read ${gas.analysis?.[c]?.basis ?? gas.basis ?? 'dry'}: change` }, `read ${gas.analysis?.[c]?.basis ?? (c === 'H2O' ? 'wet' : gas.basis ?? 'dry')}`),
         button('Copy to all zones', () => act.edit(zonesOf(line).reduce((l, _, j) => putQuantity(l, { kind: 'channel', field: 'gas', key: c, label: c, zones: [j] }, gas.analysis?.[c]), line), `${c} in all zones`, { reading: true }), 'btn small', { 'aria-label': `Copy ${c} to all zones` }),
         button('Delete', () => act.edit(putQuantity(line, { kind: 'channel', field: 'gas', key: c, label: c, zones: [i] }, undefined), `${c} deleted`, { field: `basis-${i}` }), 'btn small', { 'aria-label': `Delete ${c}` })))),
