@@ -6,7 +6,7 @@ import * as files from './files.js';
 import * as edit from './line.js';
 import { createStore, keep, kept, storageOf } from './store.js';
 import * as S from './state.js';
-import { chipMark } from './view/frame.js';
+import { chipMark, sentence } from './view/frame.js';
 import { fieldOf } from './view/pad.js';
 import { shell } from './view/shell.js';
 
@@ -118,6 +118,8 @@ function asked(target, text, chosen, over) {
 }
 
 let typing = 0;
+/** Done when what is typed last is understood: Enter keeps what stands there, not what stood a key earlier. */
+let understanding = Promise.resolve();
 async function understand() {
   const e = get().edit;
   if (!e) return;
@@ -148,7 +150,7 @@ async function understand() {
 /** @param {Partial<import('./types.js').Edit>} change */
 function typed(change) {
   set((s) => (s.edit ? { ...s, edit: { ...s.edit, fresh: false, ...change } } : s));
-  void understand();
+  understanding = understand();
 }
 
 /** @param {string} name @param {Uint8Array} bytes */
@@ -159,7 +161,7 @@ async function take(name, bytes) {
     set((s) => {
       let next = S.opened(s, line, { fileName: name, what: `Open ${name}` });
       next = { ...S.heard(S.heard(next, 'file'), 'welcome'), welcome: false, saved: line };
-      if (opened.notes.length) next = S.told(next, { id: 'notes', title: `${name} is open.`, text: opened.notes.slice(0, 6).map((/** @type {any} */ n) => `${n.at ? `${n.at}: ` : ''}${n.text}`).join('. ') + (opened.notes.length > 6 ? `. ${opened.notes.length - 6} more notes on the line.` : '.') });
+      if (opened.notes.length) next = S.told(next, { id: 'notes', title: `${name} is open.`, text: [...opened.notes.slice(0, 6).map((/** @type {any} */ n) => sentence(`${n.at ? `${n.at}: ` : ''}${n.text}`)), ...(opened.notes.length > 6 ? [`${opened.notes.length - 6} more notes on the line.`] : [])].join(' ') });
       else next = S.heard(next, 'notes');
       return next;
     });
@@ -236,7 +238,8 @@ export const act = {
       input?.focus({ preventScroll: true });
       input?.select();
     }));
-    void understand().then(() => requestAnimationFrame(() => requestAnimationFrame(inSight)));
+    understanding = understand();
+    void understanding.then(() => requestAnimationFrame(() => requestAnimationFrame(inSight)));
   },
   /** @param {string} text */
   type: (text) => typed({ text }),
@@ -267,7 +270,8 @@ export const act = {
     const e = get().edit;
     if (e) typed({ text: e.text.trim().startsWith('<') ? e.text.replace('<', '').trim() : `< ${e.text.split('±')[0].trim()}` });
   },
-  keep() {
+  async keep() {
+    await understanding;
     const e = get().edit;
     if (!e?.tentative) {
       if (e && !e.problem) act.takeBack();
