@@ -864,7 +864,13 @@ pub(crate) fn proposal_name(book: &Book, p: &leeway_findings::propose::Proposal)
     match &p.kind {
         Does::Oxidises if one => (alloc::format!("{} oxidises to {}", title(name(&p.from[0])), p.product), "avoid"),
         Does::Reduces => (alloc::format!("{} reduces to {}", title(name(&p.from[0])), p.product), "want"),
-        Does::GivesOff(gas) => (alloc::format!("{} gives off {gas}", title(name(&p.from[0]))), "want"),
+        Does::GivesOff(gas) if one => (alloc::format!("{} gives off {gas}", title(name(&p.from[0]))), "want"),
         _ => (alloc::format!("{} forms", title(p.product.clone())), "avoid"),
     }
+}
+
+/// A proposed name with the gas that brings the change about.
+pub(crate) fn proposal_by(name: &str, p: &leeway_findings::propose::Proposal) -> String {
+    let gas = p.equation.terms.iter().filter(|t| t.coefficient < num_traits::Zero::zero()).next_back();
+    gas.map_or_else(|| name.to_string(), |t| alloc::format!("{name} by {}", t.species.formula.text()))
 }

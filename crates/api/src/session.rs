@@ -82,10 +82,22 @@ impl Session {
     /// [`Problem`] where the text is no line.
     pub fn propose(&self, line_text: &str) -> Result<Vec<Proposal>, Problem> {
         let line = Self::line(line_text)?;
+        let mut taken: Vec<String> = line.changes.iter().map(|c| c.name.clone()).collect();
         Ok(leeway_findings::propose::propose(&self.book, &self.shift, &line)
             .into_iter()
             .map(|p| {
-                let (name, wish) = assess::proposal_name(&self.book, &p);
+                let (mut name, wish) = assess::proposal_name(&self.book, &p);
+                // A change needs a name of its own: the gas it is by tells two apart, else a number.
+                if taken.contains(&name) {
+                    name = assess::proposal_by(&name, &p);
+                }
+                let mut n = 2;
+                let plain = name.clone();
+                while taken.contains(&name) {
+                    name = alloc::format!("{plain}, {n}");
+                    n += 1;
+                }
+                taken.push(name.clone());
                 Proposal {
                     name,
                     equation: p.equation.text(),

@@ -214,6 +214,8 @@ impl Sweep {
 pub fn levers(case: &Case, outcome: &Outcome, sweeps: &[Sweep]) -> Vec<Lever> {
     let at = Situation { t_k: outcome.place.t_k, p_bar: case.zone.pressure.value, values: case.gas.intake.values() };
     let mut list = Vec::new();
+    let reaction = case.reaction(&outcome.bound);
+    let holds = |f: &str| reaction.used.iter().any(|u| u.formula == f);
     for sweep in sweeps {
         let (unit, reading, u) = match &sweep.what {
             What::DewPoint(i) | What::Gas(i, _) => {
@@ -222,7 +224,9 @@ pub fn levers(case: &Case, outcome: &Outcome, sweeps: &[Sweep]) -> Vec<Lever> {
             }
             _ => (case.zone.pressure.unit, case.zone.pressure.given, case.zone.pressure.u),
         };
-        if !sweep.moves(case, outcome) {
+        // Water moves a change it takes no part in only by thinning the gas: true, and no use as a lever.
+        let only_thins = matches!(sweep.what, What::DewPoint(_)) && !holds("H2O");
+        if only_thins || !sweep.moves(case, outcome) {
             continue;
         }
         let turning: Vec<f64> =
@@ -230,11 +234,9 @@ pub fn levers(case: &Case, outcome: &Outcome, sweeps: &[Sweep]) -> Vec<Lever> {
         let ends = (sweep.values[0], sweep.values[sweep.values.len() - 1]);
         list.push(make(sweep.what.clone(), unit, reading, u, turning, ends, outcome));
     }
-    let reaction = case.reaction(&outcome.bound);
-    let holds = |f: &str| reaction.used.iter().any(|u| u.formula == f);
     // A gas of the equation moves it itself; another only by making room.
     let rank = |l: &Lever| match &l.what {
-        What::DewPoint(_) if holds("H2O") => 0,
+        What::DewPoint(_) => 0,
         What::Temperature => 1,
         What::Gas(_, f) if holds(f) => 2,
         What::Pressure => 3,

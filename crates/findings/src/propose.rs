@@ -49,7 +49,7 @@ pub struct Proposal {
 }
 
 /// Gas taken up, gas given off, and what the pair does.
-const GASES: [(&[&str], &[&str]); 15] = [
+const GASES: [(&[&str], &[&str]); 17] = [
     (&["H2O"], &["H2"]),
     (&["CO2"], &["CO"]),
     (&["O2"], &[]),
@@ -58,6 +58,7 @@ const GASES: [(&[&str], &[&str]); 15] = [
     (&["CH4"], &["H2"]),
     (&["H2S"], &["H2"]),
     (&["SO2", "O2"], &[]),
+    (&["SO2", "O2"], &["CO2"]),
     (&["HCl"], &["H2"]),
     (&["CO2"], &[]),
     (&["H2O"], &[]),
@@ -65,6 +66,7 @@ const GASES: [(&[&str], &[&str]); 15] = [
     (&[], &["CO2"]),
     (&[], &["H2O"]),
     (&[], &["O2"]),
+    (&[], &[]),
 ];
 
 /// Most proposals that are handed on.
@@ -119,7 +121,10 @@ pub fn propose(book: &Book, shift: &Shift, line: &Line) -> Vec<Proposal> {
             .flat_map(|i| book.substances[i].formula.counts().keys().copied())
             .collect();
         for (taken, given) in GASES {
-            if start.len() > 1 && (taken.is_empty() || taken == ["N2"] || taken == ["CO"] || taken == ["CH4"]) {
+            // Two members join by themselves, by losing carbon dioxide, or by taking up oxygen, sulfur or chlorine.
+            let alone = taken.is_empty() && given.is_empty();
+            let joins = !matches!((taken, given), (["N2" | "CO" | "CH4"], _) | ([], ["H2O" | "O2"]));
+            if (start.len() == 1 && alone) || (start.len() > 1 && !joins) {
                 continue;
             }
             if !taken.iter().chain(given).all(|g| shown.contains(g)) {

@@ -482,7 +482,7 @@ fn balance(mut terms: Vec<Term>) -> Result<Equation, EquationError> {
     Ok(Equation::from_terms(terms))
 }
 
-/// Smallest whole coefficients; where those run past [`LARGEST_WHOLE`], decimals with the largest set to one.
+/// Smallest whole coefficients; where those run past [`LARGEST_WHOLE`], decimals with one of them set to one.
 fn scaled(v: &[BigRational]) -> Vec<BigRational> {
     let lcm = v.iter().fold(BigInt::one(), |acc, n| {
         let d = n.denom();
@@ -496,7 +496,12 @@ fn scaled(v: &[BigRational]) -> Vec<BigRational> {
     if largest <= BigInt::from(LARGEST_WHOLE) {
         return whole.into_iter().map(BigRational::from).collect();
     }
-    whole.into_iter().map(|n| BigRational::new(n, largest.clone())).collect()
+    // The largest that leaves decimals people can read; 1000/2889 is none.
+    let mut divisors: Vec<BigInt> = whole.iter().map(Signed::abs).collect();
+    divisors.sort_by(|a, b| b.cmp(a));
+    let by = |d: &BigInt| -> Vec<BigRational> { whole.iter().map(|n| BigRational::new(n.clone(), d.clone())).collect() };
+    let readable = |v: &[BigRational]| v.iter().all(|n| !number_text(n).contains('/'));
+    divisors.iter().map(by).find(|v| readable(v)).unwrap_or_else(|| by(&largest))
 }
 
 fn gcd(a: BigInt, b: BigInt) -> BigInt {
