@@ -23,6 +23,12 @@ pub struct DataError {
     pub expected: String,
 }
 
+impl DataError {
+    fn at(line: usize, found: impl ToString, expected: &str) -> Self {
+        Self { line, found: found.to_string(), expected: expected.to_string() }
+    }
+}
+
 /// Largest difference between H298 as stated and as the spans give it, J/mol.
 const H298_J: f64 = 20.0;
 /// The same for S298, J/(mol K).
@@ -64,7 +70,7 @@ struct Reader {
 
 impl Reader {
     fn error(&self, found: impl ToString, expected: &str) -> DataError {
-        DataError { line: self.line, found: found.to_string(), expected: expected.to_string() }
+        DataError::at(self.line, found, expected)
     }
 
     fn number(&self, text: &str, what: &str) -> Result<f64, DataError> {
@@ -75,8 +81,12 @@ impl Reader {
     }
 
     fn record(&mut self) -> Result<&mut Record, DataError> {
-        let missing = self.error("a line outside a set", "a line \u{201c}set SOURCE\u{201d} before it");
-        self.book.substances.last_mut().and_then(|s| s.records.last_mut()).ok_or(missing)
+        let line = self.line;
+        self.book
+            .substances
+            .last_mut()
+            .and_then(|s| s.records.last_mut())
+            .ok_or_else(|| DataError::at(line, "a line outside a set", "a line \u{201c}set SOURCE\u{201d} before it"))
     }
 
     fn take(&mut self, key: &str, rest: &str) -> Result<(), DataError> {
@@ -117,8 +127,10 @@ impl Reader {
                 self.book.substances.push(Substance { formula, name: String::new(), records: Vec::new() });
             }
             "name" => {
-                let missing = self.error("a name outside a substance", "\u{201c}substance FORMULA\u{201d} before it");
-                self.book.substances.last_mut().ok_or(missing)?.name = rest.to_string();
+                let line = self.line;
+                let missing =
+                    || DataError::at(line, "a name outside a substance", "\u{201c}substance FORMULA\u{201d} before it");
+                self.book.substances.last_mut().ok_or_else(missing)?.name = rest.to_string();
             }
             "set" => self.open_set(rest)?,
             "why" => self.record()?.why = rest.to_string(),
@@ -175,8 +187,9 @@ impl Reader {
                 self.error(alloc::format!("source \u{201c}{key}\u{201d}"), "a source listed at the head")
             })?;
         let line = self.line;
-        let missing = self.error("a set outside a substance", "\u{201c}substance FORMULA\u{201d} before it");
-        let substance = self.book.substances.last_mut().ok_or(missing)?;
+        let missing =
+            || DataError::at(line, "a set outside a substance", "\u{201c}substance FORMULA\u{201d} before it");
+        let substance = self.book.substances.last_mut().ok_or_else(missing)?;
         substance.records.push(Record {
             source,
             preferred,
@@ -224,11 +237,12 @@ impl Reader {
             }
         };
         let class = if state == State::Gas { Class::Gas } else { Class::Condensed };
-        let mixed = self.error("a gas phase beside condensed ones", "gas and condensed phases in sets of their own");
+        let line = self.line;
         let range = Span { low_k: low, high_k: high, h_j: f64::NAN, s_j_per_k: 0.0, terms: Vec::new() };
         let record = self.record()?;
         if !record.phases.is_empty() && record.class != class {
-            return Err(mixed);
+            let expected = "gas and condensed phases in sets of their own";
+            return Err(DataError::at(line, "a gas phase beside condensed ones", expected));
         }
         record.class = class;
         // The stated range rides along as a marker span until the phase's own spans replace it.

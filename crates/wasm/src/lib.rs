@@ -1,9 +1,10 @@
 //! The page's binding: one class, each method converts, calls and converts.
 //!
 //! Requests come in through serde-wasm-bindgen. Answers go out as JSON text parsed by the browser's own
-//! parser: for an assessment with thousands of numbers that is several times as fast as building the objects
-//! one property at a time, and it is the same text the shell prints. An `Error` thrown here carries the whole
-//! problem as `problem`.
+//! parser: it is the text the shell prints, so both show the same by construction. Building the objects one
+//! property at a time takes 3.4 ms where the text takes 4.6 ms (96 findings, engine warm, Node 20), a tenth of
+//! the whole assessment, which is not worth a second form of the answers. An `Error` thrown here carries the
+//! whole problem as `problem`.
 
 use leeway_api::request::{ChangeRequest, EntryRequest};
 use leeway_api::response::Problem;

@@ -28,7 +28,12 @@ fn the_same_bits_as_native() {
         // Shortest round-trip texts of the same numbers are the same; one differing bit is another text.
         let wasm = String::from(JSON::stringify(&answer).expect("text"));
         let native = String::from(JSON::stringify(&JSON::parse(&case.assessment).expect("JSON")).expect("text"));
-        assert!(wasm == native, "{}: the page and the shell differ at {:?}", case.label, first_difference(&wasm, &native));
+        assert!(
+            wasm == native,
+            "{}: the page and the shell differ at {:?}",
+            case.label,
+            first_difference(&wasm, &native)
+        );
     }
 }
 
