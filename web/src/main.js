@@ -6,7 +6,7 @@ import * as files from './files.js';
 import * as edit from './line.js';
 import { createStore, keep, kept, storageOf } from './store.js';
 import * as S from './state.js';
-import { chipMark, sentence } from './view/frame.js';
+import { chipMark, paper, sentence } from './view/frame.js';
 import { fieldOf } from './view/pad.js';
 import { shell } from './view/shell.js';
 
@@ -513,6 +513,15 @@ store.listen((state, was) => {
 });
 let told = false;
 
+/** Paper has its own measure: drawn at once, before the browser takes its picture. @param {boolean} now */
+function forPaper(now) {
+  paper(now);
+  const page = document.getElementById('page');
+  if (page) morph(page, shell(get(), act));
+}
+window.addEventListener('beforeprint', () => forPaper(true));
+window.addEventListener('afterprint', () => forPaper(false));
+window.matchMedia('print').addEventListener('change', (e) => forPaper(e.matches));
 window.addEventListener('resize', draw);
 new ResizeObserver(draw).observe(document.body);
 window.addEventListener('beforeunload', (event) => {

@@ -168,6 +168,7 @@ export function trace(doc, { bays, change, charge, width, height, label: L, befo
     else for (let j = 0; j < 12; j += 1) taken.push([bx(i) + (w * j) / 12, y(b.from + ((b.to - b.from) * (j + 0.5)) / 12) - 5, bx(i) + (w * (j + 1)) / 12, y(b.from + ((b.to - b.from) * (j + 0.5)) / 12) + 5]);
   });
   for (const r of runs) taken.push([r.a, r.v - 1, r.b, r.v + 1]);
+  for (const d of dots) if (actsC !== null && d.b.to !== null && d.b.finding?.allowed_s != null) taken.push([d.x - 4, d.y, d.x + 4, base + 2], [d.x, base - 14, bx(d.i) + (along(d.b, actsC) ?? 0) * w, base + 4]);
   const longest = [...runs].sort((a, b) => b.b - b.a - (a.b - a.a))[0];
   for (const r of longest ? [longest, ...runs.filter((q) => q !== longest)] : []) {
     const where = celsius(r.at + ZERO);

@@ -185,7 +185,7 @@ export function board(state, act) {
     head(state, act, f),
     welcome(state, act),
     n === 0 ? emptyLine(state, act) : h('div', { class: `scroll${wide ? ' wide' : ''}`, tabindex: wide ? 0 : null, role: wide ? 'region' : null, 'aria-label': wide ? 'The board; scrolls sideways' : null, 'data-key': 'scroll' },
-      h('div', { class: 'board', css: `width:${wide ? `${total}px` : '100%'};--cols:${columns};--label:${f.label}px` },
+      h('div', { class: 'board', css: `width:${wide || f.paper ? `${total}px` : '100%'};--cols:${columns};--label:${f.label}px` },
         h('div', { class: 'cuts', 'aria-hidden': 'true' }, zones.map((_, i) => h('i', { css: `left:${(f.label + i * col).toFixed(1)}px` }))),
         tabs(state, act, f),
         drawLine(state, act, f, total, selected),

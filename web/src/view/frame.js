@@ -3,12 +3,17 @@ import { h, s } from '../dom.js';
 import { formulas, NARROW } from '../format.js';
 import { mark } from '../chart/mark.js';
 
+let onPaper = false;
+/** Drawings are made for A4 while the page is printed. @param {boolean} now */
+export const paper = (now) => { onPaper = now; };
+
 /** Width of the content and how it is laid out. */
 export function frame() {
+  if (onPaper) return { page: 1400, width: 1205, phone: false, tablet: false, roomy: true, tall: false, paper: true, label: 200 };
   const page = document.documentElement.clientWidth;
   const rail = page >= 900 ? 168 : 0;
   const pad = page < 700 ? 32 : 48;
-  return { page, width: page - rail - pad, phone: page < 700, tablet: page < 900, roomy: page >= 1280, tall: window.innerHeight >= 880, label: page >= 1280 ? 200 : page >= 1100 ? 186 : page >= 900 ? 168 : 0 };
+  return { page, width: page - rail - pad, phone: page < 700, tablet: page < 900, roomy: page >= 1280, tall: window.innerHeight >= 880, paper: false, label: page >= 1280 ? 200 : page >= 1100 ? 186 : page >= 900 ? 168 : 0 };
 }
 
 /** @param {string} d @param {string} [cls] */

@@ -35,7 +35,9 @@ export function pad(state, act, { f, col, n }) {
   const refused = zone !== null && edit.tentative && state.shownLine === edit.tentative ? state.shown?.zones[zone]?.refused : null;
   const keep = entry && edit.tentative && typeof entry.quantity === 'object' ? `Keep ${reading(entry.quantity.value)}` : 'Keep';
   const others = zone === null ? 'Every zone.' : `${zones[zone].name} only.`;
-  const tolerance = entry && typeof entry.quantity === 'object' && entry.quantity.tolerance !== undefined ? `± ${withUnit(reading(entry.quantity.tolerance), difference(shownUnit))}` : old?.instrument ? String(old.instrument) : old?.tolerance !== undefined ? `± ${withUnit(reading(old.tolerance), difference(old.unit))}` : 'none';
+  // Another kind of reading brings no tolerance along: ± 2 K of a frost point says nothing about ppm.
+  const other = entry && entry.field && entry.field !== target.field && target.field === 'dew_point';
+  const tolerance = entry && typeof entry.quantity === 'object' && entry.quantity.tolerance !== undefined ? `± ${withUnit(reading(entry.quantity.tolerance), difference(shownUnit))}` : other ? 'none' : old?.instrument ? String(old.instrument) : old?.tolerance !== undefined ? `± ${withUnit(reading(old.tolerance), difference(old.unit))}` : 'none';
   const key = (/** @type {string} */ c, name = c, cls = '') => h('button', { type: 'button', class: cls, 'aria-label': name === c ? null : name, onclick: () => act.press(c) }, c === '⌫' ? glyph('M8 5h12v12H8L2 11zM11 8l6 6M17 8l-6 6') : c);
 
   // Never over the zone being changed: the side of the board with more room beyond that zone's column.

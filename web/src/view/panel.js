@@ -162,7 +162,9 @@ function zoneForm(state, act, i) {
 function addRow(state, act, key, labels, examples, verb, add) {
   const [a, b] = [state.fields[`${key}-a`]?.text ?? '', state.fields[`${key}-b`]?.text ?? ''];
   const problem = state.fields[key]?.problem;
-  const go = () => add(a, b);
+  // What stands in the fields now, not when they were drawn: Enter may come at once.
+  const now = (/** @type {'a' | 'b'} */ which) => /** @type {HTMLInputElement | null} */ (document.getElementById(`${key}-${which}`))?.value ?? '';
+  const go = () => add(now('a'), now('b'));
   const input = (/** @type {'a' | 'b'} */ which, /** @type {string} */ v, /** @type {number} */ n) => h('input', { id: `${key}-${which}`, type: 'text', autocomplete: 'off', spellcheck: 'false', 'aria-label': `${verb}: ${labels[n].toLowerCase()}`, placeholder: examples[n], value: v, oninput: (/** @type {any} */ e) => act.field(`${key}-${which}`, { text: e.target.value }), onkeydown: (/** @type {KeyboardEvent} */ e) => { if (e.key === 'Enter') { e.preventDefault(); go(); } } });
   return h('div', { class: 'addrow', 'data-key': key }, h('div', { class: 'pair' }, input('a', a, 0), input('b', b, 1), button(verb, go, 'btn small')), problem ? trouble(problem) : null);
 }

@@ -25,7 +25,7 @@ export function substances(state, act) {
 }
 
 /** @param {string} n */
-const shortName = (n) => n.split(/[,;]/)[0];
+const shortName = (n) => n.split(/[,;] /)[0];
 /** @param {import('../types.js').SubstanceRow} r */
 const phases = (r) => (r.phases.length > 2 ? `${r.phases.length} phases` : r.phases.join(', '));
 
