@@ -1,7 +1,7 @@
 //! What people type, in the habits of many sites, and how it is read back.
 
 use leeway_api::request::EntryRequest;
-use leeway_quantity::entry::{number, parse, parse_any, unit};
+use leeway_quantity::entry::{Share, number, parse, parse_any, share, unit};
 use leeway_quantity::instrument::limits_k;
 use leeway_quantity::{Kind, Quantity, Unit};
 use leeway_tests::session;
@@ -130,6 +130,7 @@ fn readings_as_they_are_typed() {
         ("-20 C dew point over water \u{b1} 2", -20.0, Unit::Celsius, Some(2.0), false, Some("water")),
         ("35 ppm", 35.0, Unit::Ppm, None, false, None),
         ("<0,1 ppm", 0.1, Unit::Ppm, None, true, None),
+        ("<= 5 ppb", 5.0, Unit::Ppb, None, true, None),
         ("\u{2264} 5 ppb", 5.0, Unit::Ppb, None, true, None),
         ("1.2 Vol.-% \u{b1} 0.1", 1.2, Unit::Percent, Some(0.1), false, None),
         ("1025 mbar", 1025.0, Unit::Millibar, None, false, None),
@@ -147,6 +148,69 @@ fn readings_as_they_are_typed() {
     }
 }
 
+/// What would be read as another quantity in silence is refused with what may be meant.
+#[test]
+fn what_may_be_two_quantities_is_refused_with_both() {
+    // A plus stands before a pressure over the hall's, not before an absolute one.
+    let e = parse("+12 mbar", Kind::Pressure, Unit::Bar).expect_err("+12 mbar");
+    assert_eq!(e.hints(), ["1.02525 bar", "12 mbar"]);
+    let e = parse("+1.025 bar", Kind::Pressure, Unit::Bar).expect_err("+1.025 bar");
+    assert_eq!(e.hints(), ["2.03825 bar", "1.0250 bar"]);
+    // Is the K the tolerance's only, or the reading's as well?
+    let e = parse("950 \u{b1} 4 K", Kind::Temperature, Unit::Celsius).expect_err("950 +- 4 K");
+    assert_eq!(e.hints(), ["950 C \u{b1} 4 K", "950 K \u{b1} 4 K"]);
+    let kelvin: Vec<f64> =
+        e.hints().iter().map(|h| parse(h, Kind::Temperature, Unit::Celsius).unwrap().quantity.value).collect();
+    assert!((kelvin[0] - 1223.15).abs() < 1e-9 && (kelvin[1] - 950.0).abs() < 1e-9, "{kelvin:?}");
+    // Nothing is 48 below 0 K: only one of the two can be meant.
+    let t = parse("-48 \u{b1} 2 K fp", Kind::Temperature, Unit::Celsius).unwrap();
+    assert_eq!((t.quantity.unit, t.quantity.given, t.over), (Unit::Celsius, -48.0, Some("ice")));
+    // Ten percent of 5 ppm, not ten percent of the gas.
+    for (text, hint, kind) in [
+        ("5 ppm \u{b1} 10 %", "5 ppm \u{b1} 0.5", Kind::Fraction),
+        ("1013 mbar +- 1 %", "1013 mbar +- 10.13", Kind::Pressure),
+        ("950 C +/- 0.75%", "950 C +/- 7.125", Kind::Temperature),
+    ] {
+        let e = parse(text, kind, Unit::Bar).expect_err(text);
+        assert_eq!(e.hints(), [hint], "{text}");
+    }
+    // A tolerance of a reading in percent is in percent of the gas.
+    let t = parse("75 % \u{b1} 2 %", Kind::Fraction, Unit::Percent).unwrap();
+    assert!((t.quantity.tolerance.unwrap().0 - 2.0).abs() < 1e-12);
+}
+
+#[test]
+fn a_share_by_mass_is_no_share_by_volume() {
+    for (text, of) in [
+        ("wt%", Some(Share::Mass)),
+        ("Gew.-%", Some(Share::Mass)),
+        ("% w/w", Some(Share::Mass)),
+        ("mol-%", Some(Share::Volume)),
+        ("ppmv", Some(Share::Volume)),
+        ("% v/v", Some(Share::Volume)),
+        ("%", None),
+        ("ppm", None),
+        ("V", None),
+    ] {
+        assert_eq!(share(text), of, "{text}");
+    }
+}
+
+#[test]
+fn the_words_of_a_dew_point_stand_where_they_are_written() {
+    for (text, value, over) in [
+        ("dp -48 C", -48.0, None),
+        ("dew point: \u{2212}20,5", -20.5, None),
+        ("frost point -50 C", -50.0, Some("ice")),
+        ("-10 C \u{b1} 2 over water", -10.0, Some("water")),
+    ] {
+        let t = parse(text, Kind::Temperature, Unit::Celsius).unwrap_or_else(|e| panic!("{text}: {e}"));
+        assert_eq!((t.quantity.given, t.over), (value, over), "{text}");
+    }
+    let water = parse_any("35 ppm H2O", Unit::Celsius).unwrap();
+    assert_eq!((water.quantity.given, water.quantity.unit), (35.0, Unit::Ppm));
+}
+
 #[test]
 fn gauge_pressures_are_refused_with_the_absolute_value() {
     for (text, hint) in [
@@ -155,6 +219,11 @@ fn gauge_pressures_are_refused_with_the_absolute_value() {
         ("0,5 barg", "1.51325 bar"),
         ("-3 mbar (g)", "1.01025 bar"),
         ("14.5 psig", "2.01299 bar"),
+        ("12 mbar over", "1.02525 bar"),
+        ("12 mbar gauge", "1.02525 bar"),
+        ("12 mbar \u{fc}", "1.02525 bar"),
+        ("12 mmH2O", "1.01443 bar"),
+        ("-5 mbar", "1.00825 bar"),
     ] {
         let e = parse(text, Kind::Pressure, Unit::Bar).expect_err(text);
         assert_eq!(e.hints(), [hint], "{text}");

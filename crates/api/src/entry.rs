@@ -6,7 +6,7 @@ use crate::{problem, words};
 use alloc::string::{String, ToString};
 use leeway_gas::humidity::{frost_point_k, saturation_pressure_bar};
 use leeway_gas::reading::Surface;
-use leeway_quantity::entry::{EntryError, Typed, number, parse_of};
+use leeway_quantity::entry::{EntryError, Share, Typed, number, parse_of};
 use leeway_quantity::{Kind, Unit};
 use serde_json::json;
 
@@ -57,6 +57,20 @@ pub(crate) fn read_entry(request: &EntryRequest) -> Result<Entry, Problem> {
             field.to_string(),
             "character 1".to_string(),
             message.to_string(),
+            alloc::vec![],
+        ));
+    }
+    let meant = match (field, typed.share) {
+        ("gas" | "dew_point", Some(Share::Mass)) => Some(("a share by mass", "a share by volume: %, ppm, ppb")),
+        ("share_wt", Some(Share::Volume)) => Some(("a share by volume", "a share by mass: %, ppm, ppb")),
+        _ => None,
+    };
+    if let Some((found, expected)) = meant {
+        return Err(problem::from_text(
+            "entry.share",
+            field.to_string(),
+            "the unit".to_string(),
+            alloc::format!("found {found}, expected {expected}"),
             alloc::vec![],
         ));
     }

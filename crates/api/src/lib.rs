@@ -16,4 +16,5 @@ mod session;
 mod substances;
 mod words;
 
+pub use leeway_line::line_of;
 pub use session::{Opened, Session, Variant};

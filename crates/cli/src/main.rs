@@ -8,7 +8,7 @@ use args::{Args, Colour, Command};
 use clap::Parser;
 use leeway_api::request::ChangeRequest;
 use leeway_api::response::{Assessment, Problem};
-use leeway_api::{Opened, Session};
+use leeway_api::{Opened, Session, line_of};
 use paper::Paper;
 use serde::Serialize;
 use std::io::{IsTerminal, Write};
@@ -94,7 +94,11 @@ fn run(command: &Command, colour: bool) -> Result<Answer, Vec<Problem>> {
             let mut assessment = session.assess(&text).map_err(one)?;
             // What was noticed of the bytes; what was noticed of the line the assessment says itself.
             assessment.notes.extend(opened.notes.into_iter().filter(|n| n.at.is_empty()));
-            let refused = refused(&assessment);
+            let mut refused = refused(&assessment);
+            if variant.is_none() {
+                // The text of a variant is not the text of the file: its lines would mislead.
+                refused.iter_mut().for_each(|p| place_in_file(p, &text));
+            }
             known_name(zone.as_deref(), assessment.zones.iter().map(|z| z.name.as_str()), "zone").map_err(one)?;
             known_name(change.as_deref(), assessment.changes.iter().map(|c| c.name.as_str()), "change").map_err(one)?;
             let code =
@@ -166,6 +170,15 @@ fn open(session: &Session, path: &Path) -> Result<Opened, Vec<Problem>> {
 fn refused(a: &Assessment) -> Vec<Problem> {
     let zones = a.zones.iter().filter_map(|z| z.refused.clone());
     zones.chain(a.changes.iter().filter_map(|c| c.refused.clone())).collect()
+}
+
+/// Adds the line of the file, which the engine has no business to know.
+fn place_in_file(p: &mut Problem, text: &str) {
+    if let Some(line) = line_of(text, &p.at)
+        && !p.place.contains("line ")
+    {
+        p.place += &format!("; line {line}");
+    }
 }
 
 fn known_name<'n>(

@@ -222,7 +222,7 @@ impl Paper {
             "{}  {}  {}  {}  {}  {}",
             pad("change", names),
             pad("zone", zones),
-            pad("standing", 17),
+            pad("standing", 19),
             pad_left("at \u{b0}C", 7),
             pad_left("dG kJ", 16),
             "leeway"
@@ -238,7 +238,7 @@ impl Paper {
                 let z = f.leeway_u.map_or_else(String::new, |z| format!(", {} u", fixed(z, 1)));
                 format!("{} {} {}{z}", leeway(l.leeway.unwrap_or(0.0), &l.unit), step_unit(&l.unit), short_label(l))
             });
-            let standing = self.standing(&f.standing, &pad(&f.standing, 17));
+            let standing = self.standing(&f.standing, &pad(&format!("{} {}", mark(&f.standing), f.standing), 19));
             self.line(&format!(
                 "{}  {}  {standing}  {}  {}  {room}",
                 pad(&clip(&f.change, names), names),
@@ -468,6 +468,17 @@ impl Paper {
                 }
             }
         }
+    }
+}
+
+/// The shape of a standing: colour is never its only carrier.
+fn mark(standing: &str) -> char {
+    match standing {
+        "on side" => '\u{25cf}',
+        "off side" => '\u{25a0}',
+        "too close to call" => '\u{25c6}',
+        "on paper" => '\u{25cb}',
+        _ => '\u{25cc}',
     }
 }
 

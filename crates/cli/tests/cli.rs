@@ -238,12 +238,12 @@ fn a_zone_or_change_that_cannot_be_taken_is_bad_input_and_the_rest_is_told() {
     let text = LINE.replace("\"balance\": \"N2\",", "\"balance\": \"H2\",");
     let (code, out, err) = piped(&["assess", "-"], text.as_bytes());
     assert_eq!(code, 2);
-    assert!(err.contains("zone 1, Heat") && err.contains("H2 twice"), "{err}");
+    assert!(err.contains("zone 1, Heat; line 8") && err.contains("H2 twice"), "{err}");
     assert!(out.contains("no data"), "{out}");
     let text = LINE.replace("Fe + H2O = Fe0.947O + H2", "Fe + H2O = FeO");
     let (code, out, err) = piped(&["assess", "-", "--json", "--strict"], text.as_bytes());
     assert_eq!(code, 2);
-    assert!(err.contains("change 1, Iron oxidises"), "{err}");
+    assert!(err.contains("change 1, Iron oxidises; line 10"), "{err}");
     assert_eq!(json(&out)["findings"][0]["standing"], "no data");
 }
 

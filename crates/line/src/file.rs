@@ -10,6 +10,7 @@ use alloc::string::{String, ToString};
 use alloc::vec::Vec;
 use leeway_gas::reading::{Basis, Cell, Channel, DewPoint, GasReading, Surface};
 use leeway_quantity::constants::BAR_PER_ATM;
+use leeway_quantity::entry::Share;
 use leeway_quantity::instrument;
 use leeway_quantity::{Kind, Quantity, Spread, Unit};
 use leeway_substances::Species;
@@ -559,7 +560,12 @@ impl Reader<'_> {
                         None
                     }
                 },
-                other => self.quantity(other, &share_at, &[Kind::Fraction], &[]),
+                other => {
+                    if let Some(json) = other {
+                        self.share_of(json, &share_at, Share::Volume, "a share by mass: %, ppm, ppb, fraction");
+                    }
+                    self.quantity(other, &share_at, &[Kind::Fraction], &[])
+                }
             };
             sum += share_wt.map_or(0.0, |q| q.value);
             let activity = self.activity(member, &at, true);
@@ -574,6 +580,14 @@ impl Reader<'_> {
             );
         }
         charge
+    }
+
+    /// Refuses a share of the other kind: 5 wt% of a gas are not 5 % of its volume.
+    fn share_of(&mut self, json: &Json, at: &str, not: Share, expected: &str) {
+        let Some(unit) = json.get("unit").and_then(Json::text) else { return };
+        if leeway_quantity::entry::share(unit) == Some(not) {
+            self.wrong("line.unit", &format!("{at}.unit"), quoted(unit), expected);
+        }
     }
 
     /// Notes a name that is no formula: a trade name or a sum such as loss on ignition may stand in a charge.
@@ -695,6 +709,7 @@ impl Reader<'_> {
             let at = format!("{at}.analysis");
             for (formula, channel) in self.object(analysis, &at, ANALYSIS).unwrap_or(&[]) {
                 let at = format!("{at}.{formula}");
+                self.share_of(channel, &at, Share::Mass, "a share by volume: %, ppm, ppb, fraction");
                 let Some(quantity) =
                     self.quantity(Some(channel), &at, &[Kind::Fraction, Kind::Pressure], &["basis", "bound"])
                 else {
@@ -805,7 +820,9 @@ impl Reader<'_> {
                             let expected = if zones.is_empty() {
                                 "no zone: the line has none yet".to_string()
                             } else {
-                                format!("a zone of the line: {}", zones.join(", "))
+                                let named: Vec<&str> =
+                                    zones.iter().map(String::as_str).filter(|z| !z.trim().is_empty()).collect();
+                                format!("a zone of the line: {}", named.join(", "))
                             };
                             let hints = zone.text().and_then(|t| nearest(t, zones.iter().map(String::as_str)));
                             let hints = hints.map(|z| format!("\"{z}\"")).into_iter().collect();

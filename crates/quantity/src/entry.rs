@@ -23,6 +23,33 @@ pub struct Typed {
     pub over: Option<&'static str>,
     /// A unit was typed.
     pub unit_typed: bool,
+    /// What a share was typed to be a share of, where its unit says so.
+    pub share: Option<Share>,
+}
+
+/// What a unit such as `wt%` or `vol%` says a share to be a share of. The two differ by the molar masses.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum Share {
+    /// Of the mass.
+    Mass,
+    /// Of the volume, or of the moles.
+    Volume,
+}
+
+/// What a unit's spelling says a share to be a share of; `None` where it says nothing.
+#[must_use]
+pub fn share(text: &str) -> Option<Share> {
+    let key = folded(text);
+    let any = |words: &[&str]| words.iter().any(|w| key.contains(w));
+    if unit(text).is_none_or(|u| u.kind() != Kind::Fraction) {
+        None
+    } else if any(&["wt", "mass", "gew", "w/w", "w%"]) {
+        Some(Share::Mass)
+    } else if any(&["vol", "mol", "v/v", "v%", "ppmv", "ppbv", "vpm"]) {
+        Some(Share::Volume)
+    } else {
+        None
+    }
 }
 
 /// Why something typed is not understood.
@@ -56,7 +83,7 @@ impl EntryError {
 const LONGEST: usize = 80;
 
 /// Spellings of units beside their symbols; compared without case, spaces, dots and brackets.
-const SPELLINGS: [(&str, Unit); 76] = [
+const SPELLINGS: [(&str, Unit); 85] = [
     ("°c", Unit::Celsius),
     ("ºc", Unit::Celsius),
     ("degc", Unit::Celsius),
@@ -87,8 +114,17 @@ const SPELLINGS: [(&str, Unit); 76] = [
     ("wt%", Unit::Percent),
     ("wt-%", Unit::Percent),
     ("%wt", Unit::Percent),
+    ("w%", Unit::Percent),
+    ("%w/w", Unit::Percent),
     ("mass%", Unit::Percent),
+    ("mass-%", Unit::Percent),
+    ("%mass", Unit::Percent),
+    ("gew%", Unit::Percent),
+    ("gew-%", Unit::Percent),
+    ("%v/v", Unit::Percent),
     ("mol%", Unit::Percent),
+    ("mol-%", Unit::Percent),
+    ("%mol", Unit::Percent),
     ("percent", Unit::Percent),
     ("pct", Unit::Percent),
     ("ppmv", Unit::Ppm),
@@ -135,18 +171,33 @@ const SPELLINGS: [(&str, Unit); 76] = [
     ("atm", Unit::Atmosphere),
 ];
 
-/// Gauge units: size of their step in bar.
-const GAUGE: [(&str, f64); 9] = [
-    ("barg", 1.0),
-    ("mbarg", 1e-3),
-    ("kpag", 1e-2),
-    ("psig", 0.068_947_572_931_683_6),
-    ("baro", 1.0),
-    ("barü", 1.0),
-    ("mbarü", 1e-3),
+/// Columns of water, which show a pressure over the hall; size of their step in bar.
+const WATER_COLUMNS: [(&str, f64); 7] = [
     ("mmh2o", 9.806_65e-5),
-    ("mbarover", 1e-3),
+    ("mmwc", 9.806_65e-5),
+    ("mmws", 9.806_65e-5),
+    ("cmh2o", 9.806_65e-4),
+    ("inh2o", 2.490_889_1e-3),
+    ("inwc", 2.490_889_1e-3),
+    ("inwg", 2.490_889_1e-3),
 ];
+
+/// What follows a unit of a pressure over the hall.
+const OVER_THE_HALL: [&str; 9] =
+    ["overpressure", "gauge", "above", "over", "\u{fc}berdruck", "rel", "\u{fc}", "o", "g"];
+
+/// Size in bar of the step of a unit that shows a pressure over the hall; `None` for any other unit.
+fn gauge_step(text: &str) -> Option<f64> {
+    if unit(text).is_some() {
+        return None;
+    }
+    let key = folded(text);
+    let column = WATER_COLUMNS.iter().find(|(w, _)| *w == key).map(|(_, step)| *step);
+    column.or_else(|| {
+        let mut stems = OVER_THE_HALL.iter().filter_map(|end| key.strip_suffix(end)).filter_map(unit);
+        stems.find(|u| u.kind() == Kind::Pressure).map(Unit::step)
+    })
+}
 
 fn folded(text: &str) -> String {
     text.chars().filter(|c| !c.is_whitespace() && !matches!(c, '(' | ')' | '.')).flat_map(char::to_lowercase).collect()
@@ -212,9 +263,21 @@ pub fn parse_of(text: &str, kinds: &[Kind], default_unit: Unit) -> Result<Typed,
         other => return other,
     };
     // 1.025 bar may be typed: 1025 bar is no gas of a hot line, so only one of the two can be meant.
-    let mut can_be = error.hints.iter().filter_map(|h| parse_plain(h, kinds, default_unit).ok()).filter(plausible);
-    match (can_be.next(), can_be.next()) {
-        (Some(only), None) => Ok(only),
+    let (mut can_be, mut last) = (Vec::new(), None);
+    for hint in &error.hints {
+        match parse_plain(hint, kinds, default_unit) {
+            Ok(typed) => can_be.push(typed),
+            Err(e) => last = Some(e),
+        }
+    }
+    // Where neither can be taken, the reason is the message: a choice between the two would lead nowhere. Where
+    // it leads to a second question, one question follows the other.
+    if let (true, Some(e)) = (can_be.is_empty(), last.filter(|e| !e.two_ways)) {
+        return Err(e);
+    }
+    can_be.retain(plausible);
+    match can_be.pop() {
+        Some(only) if can_be.is_empty() => Ok(only),
         _ => Err(error),
     }
 }
@@ -249,8 +312,12 @@ fn parse_plain(text: &str, kinds: &[Kind], default_unit: Unit) -> Result<Typed, 
     let mut bound = false;
     if let Some(after) = rest.strip_prefix(['<', '\u{2264}']) {
         bound = true;
-        rest = after.trim_start();
+        rest = after.strip_prefix('=').unwrap_or(after).trim_start();
     }
+    let (after, over_before) = take_lead(rest, kinds);
+    rest = after;
+    let number_column = column(rest);
+    let plus = rest.starts_with('+');
     let (value, used) = take_number(rest, column(rest)).map_err(|mut e| {
         if bound {
             e.hints.iter_mut().for_each(|h| h.insert(0, '<'));
@@ -264,8 +331,10 @@ fn parse_plain(text: &str, kinds: &[Kind], default_unit: Unit) -> Result<Typed, 
     let mut unit_text = before.trim();
     let mut tolerance_unit = "";
     let tolerance_value;
+    let mut tolerance_column = 1;
     if let Some(t) = tolerance {
         let t = t.trim_start();
+        tolerance_column = column(t);
         let (number, used) = take_number(t, column(t)).map_err(|mut e| {
             // A ready answer is the whole entry, not the tolerance alone.
             let whole = whole.trim();
@@ -281,19 +350,39 @@ fn parse_plain(text: &str, kinds: &[Kind], default_unit: Unit) -> Result<Typed, 
     } else {
         tolerance_value = None;
     }
-    let (unit_text, over) = take_over(unit_text);
-    let unit_text = unit_text.trim();
-    let key = folded(unit_text);
-    if let Some((_, step)) = GAUGE.iter().find(|(g, _)| *g == key) {
-        let absolute = BAR_PER_ATM + value * step;
+    let unit_column = whole.trim()[..number_end].chars().count() + 1;
+    // Before the words of a dew point are taken off: 12 mbar over is no 12 mbar.
+    if let Some(step) = gauge_step(unit_text) {
+        let mut e =
+            EntryError::new(format!("a pressure over the hall, {unit_text}"), "an absolute pressure", unit_column);
+        e.hints.extend(absolute(value * step));
+        return Err(e);
+    }
+    let (unit_text, over_after) = take_over(unit_text);
+    let own = take_over(tolerance_unit);
+    let over = over_before.or(over_after).or(own.1);
+    let own = own.0;
+    let mut unit_text = unit_text.trim();
+    if kinds.contains(&Kind::Temperature) && kinds.contains(&Kind::Fraction) {
+        // Water in place of a dew point: 35 ppm H2O.
+        unit_text = unit_text.strip_suffix("H2O").map_or(unit_text, str::trim_end);
+    }
+    if before.trim().is_empty()
+        && unit(&own) == Some(Unit::Kelvin)
+        && kinds.contains(&Kind::Temperature)
+        && matches!(default_unit, Unit::Celsius | Unit::Fahrenheit)
+    {
+        // 950 +- 4 K may be 950 C with a tolerance in kelvin, or 950 K: the words do not say.
+        let head = whole.trim()[..number_end].trim_end();
+        let tail = &whole.trim()[number_end..].trim_start();
+        let usual = default_unit.symbol();
         let mut e = EntryError::new(
-            format!("a pressure over the hall, {unit_text}"),
-            "an absolute pressure",
-            whole.trim()[..number_end].chars().count() + 1,
+            format!("\u{201c}{}\u{201d}, which may be in K or in {usual}", clip(whole.trim())),
+            "the unit of the reading before its tolerance",
+            unit_column,
         );
-        if absolute > 0.0 {
-            e.hints.push(format!("{} bar", shortest(round_to(absolute, 1e-5))));
-        }
+        e.two_ways = true;
+        e.hints = alloc::vec![format!("{head} {usual} {tail}"), format!("{head} K {tail}")];
         return Err(e);
     }
     let (unit_found, unit_typed) = if unit_text.is_empty() {
@@ -302,37 +391,81 @@ fn parse_plain(text: &str, kinds: &[Kind], default_unit: Unit) -> Result<Typed, 
         let found = unit(unit_text).filter(|u| kinds.contains(&u.kind())).ok_or_else(|| {
             let all: Vec<&str> = Unit::ALL.iter().filter(|u| kinds.contains(&u.kind())).map(|u| u.symbol()).collect();
             EntryError::new(
-                format!("the unit \u{201c}{}\u{201d}", clip(unit_text)),
+                if unit_text.starts_with(|c: char| c.is_ascii_digit()) {
+                    format!("\u{201c}{}\u{201d} after the number", clip(unit_text))
+                } else {
+                    format!("the unit \u{201c}{}\u{201d}", clip(unit_text))
+                },
                 format!("one of {}", all.join(", ")),
-                whole.trim()[..number_end].chars().count() + 1,
+                unit_column,
             )
         })?;
         (found, true)
     };
-    let fail = |e: QuantityError| {
+    let fail = |e: QuantityError, column: usize| {
         let text = e.to_string();
         let (found, expected) = text.split_once(", expected ").unwrap_or((&text, "a value that can be"));
-        EntryError::new(found.trim_start_matches("found "), expected, 1)
+        EntryError::new(found.trim_start_matches("found "), expected, column)
     };
-    let mut quantity = Quantity::new(value, unit_found).map_err(fail)?;
+    let alone = kinds == [Kind::Pressure];
+    if alone && plus {
+        // Nobody writes a plus before an absolute pressure.
+        let mut e = EntryError::new(
+            format!("+{} {}, which may stand over the hall", Figure(value), unit_found.symbol()),
+            "an absolute pressure without a sign",
+            number_column,
+        );
+        e.hints.extend(absolute(value * unit_found.step()));
+        e.hints.push(whole.trim().trim_start_matches('+').trim_start().to_string());
+        return Err(e);
+    }
+    let mut quantity = Quantity::new(value, unit_found).map_err(|e| {
+        let mut e = fail(e, number_column);
+        if alone && value < 0.0 {
+            // A draught below the hall's pressure is meant.
+            e.hints.extend(absolute(value * unit_found.step()));
+        }
+        e
+    })?;
     if let Some(t) = tolerance_value {
         // A tolerance in a unit of its own is turned into steps of the value's unit.
-        let own = take_over(tolerance_unit).0;
         let own = own.trim();
+        let wrong = |expected: String, column: usize| {
+            EntryError::new(format!("a tolerance in \u{201c}{}\u{201d}", clip(own)), expected, column)
+        };
         let steps = match unit(own).filter(|_| !own.is_empty()) {
+            Some(Unit::Percent) if unit_found != Unit::Percent => {
+                // Of the reading, or of the range: said in the reading's own unit it cannot be misread.
+                let mut e = wrong(format!("a tolerance in {}", unit_found.symbol()), column(tolerance_unit));
+                let whole = whole.trim();
+                let head = whole[..whole.len() - tolerance.map_or(0, str::len)].trim_end();
+                e.hints.push(format!("{head} {}", Figure(value.abs() * t / 100.0)));
+                return Err(e);
+            }
             Some(u) if u.kind() == unit_found.kind() => t * u.step() / unit_found.step(),
             _ if own.is_empty() => t,
-            _ => {
-                return Err(EntryError::new(
-                    format!("a tolerance in \u{201c}{}\u{201d}", clip(own)),
-                    format!("a tolerance in {}", unit_found.symbol()),
-                    1,
-                ));
-            }
+            _ => return Err(wrong(format!("a tolerance in {}", unit_found.symbol()), column(tolerance_unit))),
         };
-        quantity = quantity.with_tolerance(steps, Spread::Limits).map_err(fail)?;
+        quantity = quantity.with_tolerance(steps, Spread::Limits).map_err(|e| fail(e, tolerance_column))?;
     }
-    Ok(Typed { quantity, bound, over, unit_typed })
+    let share = share(unit_text);
+    Ok(Typed { quantity, bound, over, unit_typed, share })
+}
+
+/// The absolute pressure as it would be typed, of one over the hall's; none where it would be below 0.
+fn absolute(over_bar: f64) -> Option<String> {
+    let bar = BAR_PER_ATM + over_bar;
+    (bar > 0.0).then(|| format!("{} bar", shortest(round_to(bar, 1e-5))))
+}
+
+/// A number to at most four digits, for a ready answer.
+struct Figure(f64);
+
+impl core::fmt::Display for Figure {
+    fn fmt(&self, f: &mut core::fmt::Formatter<'_>) -> core::fmt::Result {
+        let rounded: f64 = format!("{:.3e}", self.0).parse().unwrap_or(self.0);
+        write!(f, "{rounded}")
+    }
 }
 
 fn clip(text: &str) -> String {
@@ -377,6 +510,21 @@ fn take_over(text: &str) -> (String, Option<&'static str>) {
     (kept.join(" "), over)
 }
 
+/// Takes the words for a dew or frost point off the head of a text: `dp -48`, `frost point \u{2212}50 C`.
+fn take_lead<'t>(text: &'t str, kinds: &[Kind]) -> (&'t str, Option<&'static str>) {
+    let (mut rest, mut over) = (text, None);
+    while kinds.contains(&Kind::Temperature) {
+        let end = rest.find(|c: char| !c.is_alphabetic()).unwrap_or(rest.len());
+        let (left, found) = take_over(&rest[..end]);
+        if end == 0 || !left.is_empty() {
+            break;
+        }
+        over = over.or(found);
+        rest = rest[end..].trim_start_matches([' ', ':', '=', '\u{a0}']);
+    }
+    (rest, over)
+}
+
 /// A number at the head of a text, and how many bytes it takes.
 fn take_number(text: &str, column: usize) -> Result<(f64, usize), EntryError> {
     let wanted = "a number";
@@ -387,6 +535,7 @@ fn take_number(text: &str, column: usize) -> Result<(f64, usize), EntryError> {
             sign = "-";
             chars.next();
         } else if c == '+' && !text.starts_with("+-") && !text.starts_with("+/") {
+            sign = "+";
             chars.next();
         }
         while chars.peek().is_some_and(|(_, c)| c.is_whitespace()) {
