@@ -96,6 +96,46 @@ for (const [name, how, touch] of [['laptop', LAPTOP, false], ['tablet', TABLET, 
   });
 }
 
+for (const [name, how] of [['laptop', LAPTOP], ['tablet', TABLET]]) {
+  test(`every demo line and variant is drawn whole, ${name}`, async () => {
+    const found = [];
+    const { context, tab, seen } = await open(browser, how);
+    const lines = async () => {
+      await tab.click('.linename');
+      await tab.click('.panel button:has-text("Another line")');
+      await tab.waitForSelector('.panel .choices button');
+    };
+    await lines();
+    const count = await tab.locator('.panel .choices button').count();
+    for (let i = 0; i < count; i += 1) {
+      if (i) await lines();
+      await tab.click(`.panel .choices button >> nth=${i}`);
+      await settle(tab);
+      if (await tab.isVisible('.panel')) await tab.keyboard.press('Escape');
+      await settle(tab);
+      const variants = await tab.locator('.modes button').count();
+      for (let v = 0; v < variants; v += 1) {
+        await tab.click(`.modes button >> nth=${v}`);
+        await settle(tab);
+        const title = `${await tab.textContent('.linename')}, ${await tab.textContent(`.modes button >> nth=${v}`)}`;
+        found.push(...(await tab.evaluate(look, { touch: false })).map((f) => `${title}: ${f}`));
+        await tab.screenshot({ path: new URL(`shots/demo-${i}-${v}-${name}.png`, import.meta.url).pathname, fullPage: true });
+        if (v === 0) {
+          // Its first cell as well.
+          await tab.click('.row .cell[aria-label] >> nth=0');
+          await settle(tab);
+          found.push(...(await tab.evaluate(look, { touch: false })).map((f) => `${title}, a cell: ${f}`));
+          await tab.keyboard.press('Escape');
+          await settle(tab);
+        }
+      }
+    }
+    quiet(seen);
+    await context.close();
+    assert.deepEqual(found, []);
+  });
+}
+
 /** Runs in the page: sideways scrolling, cut text, words over words, small targets. */
 function look({ touch }) {
   const found = [];

@@ -166,8 +166,12 @@ export function stretches(finding) {
     const last = list.at(-1);
     if (last && last.standing === p.standing) last.to = p.temperature_K;
     else {
-      if (last) last.to = p.temperature_K;
-      list.push({ standing: p.standing, from: p.temperature_K, to: p.temperature_K });
+      // The place where it grows too slow is known; other ends are those of the points computed.
+      const slow = finding.acts_above_K;
+      const paper = p.standing === 'on paper' || last?.standing === 'on paper';
+      const end = last && slow != null && paper && (slow - last.to) * (slow - p.temperature_K) <= 0 ? slow : p.temperature_K;
+      if (last) last.to = end;
+      list.push({ standing: p.standing, from: end, to: p.temperature_K });
     }
   }
   return list;
