@@ -30,7 +30,7 @@ export function gauge(doc, { figure, before, standing: name, span, width, k }) {
   const out = [];
   if (figure.kind !== 'turns' || !span) {
     out.push(s(doc, 'path', { d: `M0 ${y}H${W}`, class: 'axis', 'stroke-dasharray': figure.kind === 'no turn' ? null : '2 4' }));
-    if (figure.kind === 'no turn') out.push(mark(doc, name, W / 2, y));
+    if (figure.kind !== 'no data') out.push(mark(doc, name, W / 2, y));
     if (figure.kind === 'no data') out.push(mark(doc, 'no data', W / 2, y));
     return s(doc, 'svg', { viewBox: `0 0 ${W} ${H}`, 'aria-hidden': 'true', class: 'gauge' }, out);
   }
