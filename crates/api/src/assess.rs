@@ -847,8 +847,8 @@ fn arithmetic(outcome: &Outcome, used: &[Used]) -> Arithmetic {
     }
 }
 
-/// Proposed name and wish of a change.
-pub(crate) fn proposal_name(book: &Book, p: &leeway_findings::propose::Proposal) -> (String, &'static str) {
+/// Proposed name of a change.
+pub(crate) fn proposal_name(book: &Book, p: &leeway_findings::propose::Proposal) -> String {
     use leeway_findings::propose::Kind as Does;
     let name = |formula: &str| {
         let first = book
@@ -862,15 +862,15 @@ pub(crate) fn proposal_name(book: &Book, p: &leeway_findings::propose::Proposal)
     };
     let one = p.from.len() == 1;
     match &p.kind {
-        Does::Oxidises if one => (alloc::format!("{} oxidises to {}", title(name(&p.from[0])), p.product), "avoid"),
-        Does::Reduces => (alloc::format!("{} reduces to {}", title(name(&p.from[0])), p.product), "want"),
-        Does::GivesOff(gas) if one => (alloc::format!("{} gives off {gas}", title(name(&p.from[0]))), "want"),
-        _ => (alloc::format!("{} forms", title(p.product.clone())), "avoid"),
+        Does::Oxidises if one => alloc::format!("{} oxidises to {}", title(name(&p.from[0])), p.product),
+        Does::Reduces => alloc::format!("{} reduces to {}", title(name(&p.from[0])), p.product),
+        Does::GivesOff(gas) if one => alloc::format!("{} gives off {gas}", title(name(&p.from[0]))),
+        _ => alloc::format!("{} forms", title(p.product.clone())),
     }
 }
 
 /// A proposed name with the gas that brings the change about.
 pub(crate) fn proposal_by(name: &str, p: &leeway_findings::propose::Proposal) -> String {
-    let gas = p.equation.terms.iter().filter(|t| t.coefficient < num_traits::Zero::zero()).next_back();
+    let gas = p.equation.terms.iter().rfind(|t| t.coefficient < num_traits::Zero::zero());
     gas.map_or_else(|| name.to_string(), |t| alloc::format!("{name} by {}", t.species.formula.text()))
 }

@@ -86,7 +86,7 @@ impl Session {
         Ok(leeway_findings::propose::propose(&self.book, &self.shift, &line)
             .into_iter()
             .map(|p| {
-                let (mut name, wish) = assess::proposal_name(&self.book, &p);
+                let mut name = assess::proposal_name(&self.book, &p);
                 // A change needs a name of its own: the gas it is by tells two apart, else a number.
                 if taken.contains(&name) {
                     name = assess::proposal_by(&name, &p);
@@ -101,7 +101,7 @@ impl Session {
                 Proposal {
                     name,
                     equation: p.equation.text(),
-                    wish: String::from(wish),
+                    wish: String::from(assess::wish_text(p.wish)),
                     nearest_zone: line.zones[p.nearest_zone].name.clone(),
                     leeway_u: p.z,
                     dg_kj: p.dg_kj,

@@ -34,6 +34,8 @@ pub enum Kind {
 pub struct Proposal {
     /// What it does.
     pub kind: Kind,
+    /// What is usually wished of such a change: reduction and calcining are wanted, the rest is not.
+    pub wish: Wish,
     /// Members of the charge it starts from.
     pub from: Vec<String>,
     /// Condensed product.
@@ -159,7 +161,9 @@ pub fn propose(book: &Book, shift: &Shift, line: &Line) -> Vec<Proposal> {
                     (["H2O"], ["H2"]) | (["CO2"], ["CO"]) | (["O2"], []) => Kind::Oxidises,
                     _ => Kind::Forms,
                 };
-                let Ok(compiled) = Compiled::from_equation(book, &equation, 1.0) else { continue };
+                let wanted = kind == Kind::Reduces || (start.len() == 1 && matches!(kind, Kind::GivesOff(_)));
+                let (wish, sign) = if wanted { (Wish::Want, -1.0) } else { (Wish::Avoid, 1.0) };
+                let Ok(compiled) = Compiled::from_equation(book, &equation, sign) else { continue };
                 if watched.iter().any(|w| w.forms.iter().any(|(_, r)| r.same_as(compiled.written()))) {
                     continue;
                 }
@@ -169,9 +173,12 @@ pub fn propose(book: &Book, shift: &Shift, line: &Line) -> Vec<Proposal> {
                 }) {
                     continue;
                 }
-                let Some((nearest_zone, dg_kj, z)) = nearest(&ground, line, &gases, &compiled, &text) else { continue };
+                let Some((nearest_zone, dg_kj, z)) = nearest(&ground, line, &gases, &compiled, &text, wish) else {
+                    continue;
+                };
                 list.push(Proposal {
                     kind,
+                    wish,
                     from: start.iter().map(ToString::to_string).collect(),
                     product: (*product).to_string(),
                     equation,
@@ -202,11 +209,12 @@ fn nearest(
     gases: &[Option<(ZoneGas, crate::fan::Fan)>],
     compiled: &Compiled,
     text: &str,
+    wish: Wish,
 ) -> Option<(usize, f64, f64)> {
     let change = Change {
         name: String::new(),
         equation: text.to_string(),
-        wish: Wish::Avoid,
+        wish,
         zones: None,
         activities: Vec::new(),
         acts_above: None,
@@ -218,7 +226,7 @@ fn nearest(
         let Some((gas, fan)) = gas else { continue };
         let case = Case { ground: *ground, zone, change: &change, compiled, gas };
         let Ok(outcome) = case.outcome(fan) else { continue };
-        let z = outcome.leeway_u().unwrap_or(f64::MAX);
+        let z = outcome.leeway_u().map_or(f64::MAX, |z| outcome.sign * z);
         if best.is_none_or(|(_, _, b)| z.abs() < b.abs()) {
             best = Some((i, outcome.read.dg_kj, z));
         }
