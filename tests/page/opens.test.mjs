@@ -148,9 +148,12 @@ function look({ touch }) {
   for (const e of document.querySelectorAll('#page button, #page h1, #page h2, #page p, #page .say')) {
     if (!shown(e) || e.closest('.skip')) continue;
     const box = e.getBoundingClientRect();
-    for (const child of e.querySelectorAll('b, span, i, s')) {
-      const r = child.getBoundingClientRect();
-      if (r.width > 0 && (r.right > box.right + 1.5 || r.left < box.left - 1.5)) { found.push(`“${words(child)}” runs out of its ${e.className || e.tagName}`); break; }
+    const text = document.createTreeWalker(e, NodeFilter.SHOW_TEXT);
+    for (let node = text.nextNode(); node; node = text.nextNode()) {
+      const range = document.createRange();
+      range.selectNodeContents(node);
+      const r = range.getBoundingClientRect();
+      if (r.width > 1 && getComputedStyle(node.parentElement).position !== 'absolute' && (r.right > box.right + 1.5 || r.left < box.left - 1.5)) { found.push(`“${node.data.trim().slice(0, 40)}” runs out of its ${e.className || e.tagName}`); break; }
     }
     if (e.scrollWidth > e.clientWidth + 2 && e.clientWidth > 0 && getComputedStyle(e).overflowX !== 'visible') found.push(`“${words(e)}” is cut in its ${e.className || e.tagName}`);
   }

@@ -27,7 +27,7 @@ export function substances(state, act) {
 /** @param {string} n */
 const shortName = (n) => n.split(/[,;] /)[0];
 /** @param {import('../types.js').SubstanceRow} r */
-const phases = (r) => (r.phases.length > 2 ? `${r.phases.length} phases` : r.phases.join(', '));
+const phases = (r) => (r.phases.length > 2 || r.phases.join(', ').length > 20 ? `${r.phases.length} phases` : r.phases.join(', '));
 
 /** @param {State} state @param {Act} act @param {import('../types.js').Substance} sub @param {ReturnType<typeof frame>} f */
 function record(state, act, sub, f) {
