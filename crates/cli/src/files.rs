@@ -9,9 +9,8 @@ const MOST: u64 = 4_000_001;
 
 /// Bytes of a file, or of standard input for `-`.
 ///
-/// A directory, a missing file and a file that may not be read are problems that name it.
+/// A directory, a missing file and a file that may not be read are problems; the caller names the file.
 pub(crate) fn read(path: &Path) -> Result<Vec<u8>, Problem> {
-    let name = if path.as_os_str() == "-" { "standard input".to_owned() } else { path.display().to_string() };
     let mut bytes = Vec::new();
     let taken = if path.as_os_str() == "-" {
         std::io::stdin().lock().take(MOST).read_to_end(&mut bytes)
@@ -21,8 +20,8 @@ pub(crate) fn read(path: &Path) -> Result<Vec<u8>, Problem> {
     taken.map_err(|e| Problem {
         code: "file.read".to_owned(),
         at: String::new(),
-        place: name.clone(),
-        message: format!("{name} is not read: {e}"),
+        place: String::new(),
+        message: format!("it is not read: {e}"),
         found: e.to_string(),
         expected: "a line file that can be read".to_owned(),
         hints: Vec::new(),

@@ -21,7 +21,10 @@ const BAD_INPUT: u8 = 2;
 const OFF_SIDE: u8 = 1;
 
 fn main() -> ExitCode {
-    let args = Args::parse();
+    let args = match Args::try_parse() {
+        Ok(args) => args,
+        Err(e) => return words(&e),
+    };
     let wanted = |terminal: bool| match args.color {
         Colour::Always => true,
         Colour::Never => false,
@@ -29,7 +32,10 @@ fn main() -> ExitCode {
     };
     let colour = wanted(std::io::stdout().is_terminal());
     let file = match &args.command {
-        Command::Assess { line, .. } | Command::Propose { line, .. } => line.display().to_string(),
+        Command::Assess { line, .. } | Command::Propose { line, .. } => match line.display().to_string() {
+            dash if dash == "-" => "standard input".to_owned(),
+            name => name,
+        },
         _ => String::new(),
     };
     match run(&args.command, colour) {
@@ -39,6 +45,17 @@ fn main() -> ExitCode {
         }
         Err(problems) => bad_input(&file, &problems),
     }
+}
+
+/// Help and version to standard output; words that are no command to standard error, in the voice of the rest.
+fn words(e: &clap::Error) -> ExitCode {
+    if !e.use_stderr() {
+        return write_out(&e.render().to_string(), 0);
+    }
+    let text = e.render().to_string();
+    let text = text.strip_prefix("error: ").map_or(text.clone(), |t| format!("leeway: {t}"));
+    let _ = std::io::stderr().write_all(text.as_bytes());
+    ExitCode::from(BAD_INPUT)
 }
 
 /// Says on standard error what is wrong, where, and what mends it.
