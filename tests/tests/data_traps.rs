@@ -57,8 +57,14 @@ fn wustite_is_not_stoichiometric() {
     // Stored as Fe0.95O elsewhere: 69.05 g/mol, and iron is not conserved.
     near(b.substances[wustite].formula.molar_mass(), 0.947 * 55.845 + 15.999, 1e-9);
     let iron_boundary = preferred(&b, "FeO", Class::Condensed);
-    assert!(iron_boundary.phases.iter().all(|p| p.name.starts_with("wustite")), "only wustite stands for condensed FeO");
-    assert!(iron_boundary.phases.iter().any(|p| p.beside.as_deref() == Some("Fe3O4")), "the magnetite boundary has its own record");
+    assert!(
+        iron_boundary.phases.iter().all(|p| p.name.starts_with("wustite")),
+        "only wustite stands for condensed FeO"
+    );
+    assert!(
+        iron_boundary.phases.iter().any(|p| p.beside.as_deref() == Some("Fe3O4")),
+        "the magnetite boundary has its own record"
+    );
     // The tables' stoichiometric crystal gives H2O/H2 = 0.31 at 1000 C; measured 0.669.
     let at = |equation: &str| {
         let r = ChangeRequest { equation: equation.into(), at: vec!["1000 C".into()], ..ChangeRequest::default() };
@@ -67,7 +73,11 @@ fn wustite_is_not_stoichiometric() {
     near(exp(at("FeO + H2 = Fe + H2O") * core::f64::consts::LN_10), 0.669, 0.03);
     // Beside magnetite the other boundary is used: 3 FeO + H2O = Fe3O4 + H2 differs from the iron boundary's record.
     let magnetite = session()
-        .change(&ChangeRequest { equation: "3 FeO + H2O = Fe3O4 + H2".into(), at: vec!["900 C".into()], ..ChangeRequest::default() })
+        .change(&ChangeRequest {
+            equation: "3 FeO + H2O = Fe3O4 + H2".into(),
+            at: vec!["900 C".into()],
+            ..ChangeRequest::default()
+        })
         .expect("held");
     assert_ne!(magnetite[0].phases["FeO"], "wustite");
 }
@@ -86,7 +96,13 @@ fn mislabelled_and_overlapping_phases() {
                 for q in &stable[i + 1..] {
                     let overlap = p.high_k().min(q.high_k()) - p.low_k().max(q.low_k());
                     let polymorphs = p.state == q.state && p.low_k() == q.low_k();
-                    assert!(overlap < 1e-6 || polymorphs, "{}: {} and {} overlap by {overlap} K", s.formula.text(), p.name, q.name);
+                    assert!(
+                        overlap < 1e-6 || polymorphs,
+                        "{}: {} and {} overlap by {overlap} K",
+                        s.formula.text(),
+                        p.name,
+                        q.name
+                    );
                 }
             }
         }
@@ -115,12 +131,17 @@ fn every_record_says_where_it_is_from_and_how_sure_it_is() {
             let element = s.formula.single_element().is_some();
             assert!(r.u_h298_kj > 0.0 || element, "{what}: a compound without doubt of its enthalpy");
             assert!(r.u_s298_j_per_k > 0.0, "{what}: without doubt of its entropy");
-            assert!(!r.cite_is_memory(&b) || r.u_h298_kj >= 10.0 || !r.preferred, "{what}: from memory with too small a doubt");
+            assert!(
+                !r.cite_is_memory(&b) || r.u_h298_kj >= 10.0 || !r.preferred,
+                "{what}: from memory with too small a doubt"
+            );
         }
     }
     assert!(b.substances.len() >= 400 && phases >= 700, "{} substances, {phases} phases", b.substances.len());
     // Asked for by name from the start.
-    for f in ["NiO", "CoO", "MnO", "ZnO", "FeO", "Fe0.947O", "Fe3C", "MgCO3", "CaCO3", "Cr2O3", "Cr2N", "MnCr2O4", "FeCr2O4"] {
+    for f in
+        ["NiO", "CoO", "MnO", "ZnO", "FeO", "Fe0.947O", "Fe3C", "MgCO3", "CaCO3", "Cr2O3", "Cr2N", "MnCr2O4", "FeCr2O4"]
+    {
         preferred(&b, f, Class::Condensed);
     }
 }
