@@ -499,7 +499,8 @@ fn scaled(v: &[BigRational]) -> Vec<BigRational> {
     // The largest that leaves decimals people can read; 1000/2889 is none.
     let mut divisors: Vec<BigInt> = whole.iter().map(Signed::abs).collect();
     divisors.sort_by(|a, b| b.cmp(a));
-    let by = |d: &BigInt| -> Vec<BigRational> { whole.iter().map(|n| BigRational::new(n.clone(), d.clone())).collect() };
+    let by =
+        |d: &BigInt| -> Vec<BigRational> { whole.iter().map(|n| BigRational::new(n.clone(), d.clone())).collect() };
     let readable = |v: &[BigRational]| v.iter().all(|n| !number_text(n).contains('/'));
     divisors.iter().map(by).find(|v| readable(v)).unwrap_or_else(|| by(&largest))
 }
