@@ -253,6 +253,8 @@ export const act = {
     else if (c === '−' && !e.fresh && !text.includes('±')) text = /^[-−]/.test(text) ? text.slice(1) : `−${text}`;
     else if (c === '±') text = text.includes('±') ? `${text.split('±')[0].trim()} ± ` : `${text.trim()} ± `;
     else text = e.fresh ? c : text + c;
+    // Shown at once, not with the next frame: fingers are quick.
+    if (input) input.value = text;
     typed({ text });
     input?.focus({ preventScroll: true });
   },
