@@ -335,3 +335,20 @@ fn standing_follows_its_rule() {
     }
     let _ = (Standing::OnSide, exp(0.0));
 }
+
+/// A phase named by its family is the form that is stable there; named whole it is that form.
+#[test]
+fn phases_by_name() {
+    let session = session();
+    let phase = |equation: &str, at: &str, formula: &str| {
+        session.change(&request(equation, &[at])).unwrap_or_else(|p| panic!("{}", p.message))[0].phases[formula].clone()
+    };
+    assert_eq!(phase("SiO2(quartz) + 2 H2 = Si + 2 H2O", "500 C", "SiO2"), "quartz-alpha");
+    assert_eq!(phase("SiO2(quartz) + 2 H2 = Si + 2 H2O", "700 C", "SiO2"), "quartz-beta");
+    assert_eq!(phase("SiO2 + 2 H2 = Si + 2 H2O", "1600 C", "SiO2"), "cristobalite");
+    assert_eq!(phase("Fe(l) + 0.5 O2 = FeO(g)", "1600 C", "Fe"), "liquid");
+    assert_eq!(phase("FeO(wustite) + H2 = Fe + H2O", "900 C", "FeO"), "wustite");
+    assert!(
+        session.change(&request("SiO2(tridymite) = SiO2(quartz)", &["900 C"])).is_err_and(|p| p.code == "data.phase")
+    );
+}

@@ -185,7 +185,7 @@ impl Book {
                 let gas = self.substances[substance]
                     .records
                     .iter()
-                    .any(|r| r.class == Class::Gas && r.phases.iter().any(|p| p.name == *name));
+                    .any(|r| r.class == Class::Gas && r.phases.iter().any(|p| is_kind_of(&p.name, name)));
                 if gas { Class::Gas } else { Class::Condensed }
             }
             Asked::Any => self.default_class(substance),
@@ -207,6 +207,9 @@ impl Book {
     ) -> Result<Vec<(usize, usize)>, LookupError> {
         let s = &self.substances[substance];
         let class = self.class_of(substance, asked);
+        // `quartz` names both quartz-alpha and quartz-beta where no phase is called just that.
+        let exact = matches!(asked, Asked::Phase(name)
+            if s.records.iter().any(|r| r.phases.iter().any(|p| p.name == *name)));
         let mut found = Vec::new();
         let mut at_boundary = false;
         for (ri, record) in s.records.iter().enumerate().filter(|(_, r)| r.preferred && r.class == class) {
@@ -214,7 +217,8 @@ impl Book {
                 let fits = match asked {
                     Asked::Any => !phase.metastable,
                     Asked::State(state) => phase.state == *state && !phase.metastable,
-                    Asked::Phase(name) => phase.name == *name,
+                    Asked::Phase(name) if exact => phase.name == *name,
+                    Asked::Phase(name) => is_kind_of(&phase.name, name),
                 };
                 if !fits {
                     continue;
@@ -289,4 +293,9 @@ impl Book {
             (low.min(phase.low_k()), high.max(phase.high_k()))
         })
     }
+}
+
+/// Whether a phase is the one named, or one of its forms: `quartz-beta` is quartz.
+fn is_kind_of(phase: &str, name: &str) -> bool {
+    phase.strip_prefix(name).is_some_and(|rest| rest.is_empty() || rest.starts_with('-'))
 }
