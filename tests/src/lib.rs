@@ -1,5 +1,6 @@
 //! Loaders and helpers shared by the tests.
 
+use std::collections::BTreeMap;
 use std::path::PathBuf;
 
 /// The engine with its data.
@@ -25,6 +26,35 @@ pub fn path(inside: &str) -> PathBuf {
 pub fn text(inside: &str) -> String {
     let path = path(inside);
     std::fs::read_to_string(&path).unwrap_or_else(|e| panic!("{}: {e}", path.display()))
+}
+
+/// Rows of a table of comma-separated values inside the folder of the tests, by name of column. Lines that begin
+/// with `#` are comments; a cell with commas stands in quotation marks.
+///
+/// # Panics
+/// Where it cannot be read, or a row has another number of cells than the head.
+#[must_use]
+pub fn table(inside: &str) -> Vec<BTreeMap<String, String>> {
+    let text = text(inside);
+    let mut rows = text.lines().filter(|l| !l.starts_with('#') && !l.is_empty()).map(cells);
+    let head = rows.next().unwrap_or_else(|| panic!("{inside}: empty"));
+    rows.map(|row| {
+        assert_eq!(row.len(), head.len(), "{inside}: {row:?}");
+        head.iter().cloned().zip(row).collect()
+    })
+    .collect()
+}
+
+fn cells(line: &str) -> Vec<String> {
+    let (mut out, mut quoted) = (vec![String::new()], false);
+    for c in line.chars() {
+        match c {
+            '"' => quoted = !quoted,
+            ',' if !quoted => out.push(String::new()),
+            c => out.last_mut().expect("never empty").push(c),
+        }
+    }
+    out
 }
 
 /// File names and texts of the demo lines, in order of name.

@@ -32,51 +32,7 @@ NOT_COMPARED = {("FeO", "condensed")}
 # Tables of an isomer: ethylene oxide where we hold ethanal.
 NOT_THE_SAME = {"C-129"}
 
-# Differences beyond 2 kJ and beyond twice the standard uncertainty, or tables known to be wrong: formula and class, reason.
-EXCEPTIONS = {
-    # the table is wrong, or older than a settled correction
-    ("C2H", "gas"): "the table's enthalpy (477 kJ) is older than the spectroscopic value near 566 kJ",
-    ("HCHO", "gas"): "the table's enthalpy is 7 kJ under combustion calorimetry (-108.6 kJ)",
-    ("NH", "gas"): "the table's enthalpy is 20 kJ over the spectroscopic value (357 kJ)",
-    ("P4O6", "gas"): "the table's enthalpy is 600 kJ under the other evaluations",
-    ("PH3", "gas"): "the table refers to red phosphorus, all others to white",
-    ("PbCl4", "gas"): "the table's columns disagree with each other",
-    ("TiCl4", "condensed"): "the table's entropy of the liquid (221.9) is 30 J/K under calorimetry (252.3)",
-    ("MgSO4", "condensed"): "the table is 23 kJ over three other evaluations",
-    ("ZrSiO4", "condensed"): "the table is older than the calorimetry that moved zircon by 11 kJ",
-    ("SiS2", "condensed"): "unsettled: the evaluations differ by 73 kJ; u(H298) is 35 kJ",
-    ("Cr2O3", "condensed"): "set beside the preferred one, from a galvanic cell whose entropy disagrees with calorimetry",
-    ("Co3O4", "condensed"): "set beside the preferred one; calorimetry differs by 9 kJ",
-    ("Fe3O4", "condensed"): "set beside the preferred one; newer evaluations are 4 to 6 kJ less stable",
-    ("MgCO3", "condensed"): "set beside the preferred one, set aside because it is 15 kJ off calorimetry",
-    ("COS", "gas"): "newer enthalpy, 3.3 kJ under the table",
-    # barium and strontium: the evaluations start from different tables of the metal, and melt it at different temperatures
-    ("BaO", "condensed"): "different tables of barium metal",
-    ("BaS", "condensed"): "newer enthalpy, 7 kJ under the table; different tables of barium metal",
-    ("BaS", "gas"): "different tables of barium metal",
-    ("BaOH", "gas"): "different tables of barium metal",
-    ("BaF2", "gas"): "different tables of barium metal",
-    ("Sr", "gas"): "enthalpy of sublimation differs by 3.5 kJ, entropy of the metal by 0.7 J/K",
-    ("SrS", "gas"): "enthalpy and the tables of strontium metal differ",
-    ("SrF2", "condensed"): "newer enthalpy, 12 kJ over the table",
-    ("Sr(OH)2", "gas"): "estimated molecule",
-    # melts and alkali oxides whose heats of fusion differ
-    ("K2SiO3", "condensed"): "heat of fusion and heat capacity of the melt differ",
-    ("Na2O", "condensed"): "heat of fusion and heat capacity differ",
-    ("PbF2", "condensed"): "the table's entropy, an estimate, is 7 J/K higher",
-    # radicals and dimers known to no better than this
-    ("B", "gas"): "heat of sublimation of boron: 575.6 here, 560 in the table",
-    ("K2Cl2", "gas"): "entropy of the molecule differs by 2.5 J/K",
-    ("CHCl3", "gas"): "heat capacity of the molecule differs",
-    ("N2H4", "gas"): "heat capacity of the molecule differs",
-    ("BH3", "gas"): "heat capacity of the molecule differs",
-    ("HBO2", "gas"): "entropy and heat capacity of the molecule differ",
-    ("W", "gas"): "heat capacity of the atom differs: excited states counted differently",
-}
-for _formula in (
-    "Si2 Al2O2 AlOH B2O2 CCl3 KO Li2O Na2O2H2 NaBO2 PCl5 PO2 PbCl SF4 SiCl3 TaO2 VO2 W4O12"
-).split():
-    EXCEPTIONS[(_formula, "gas")] = "molecule known from estimates or few measurements; two evaluations, neither settled"
+EXCEPTIONS = Path(__file__).resolve().parents[1] / "exceptions.csv"
 
 
 def counts(formula):
@@ -296,7 +252,6 @@ def make():
                 "s_j_per_k": f"{ts:.3f}", "dfh_kj": f"{dh:.3f}", "dfg_kj": f"{dg:.3f}",
                 "dfg_column_kj": "" if column is None else f"{column:.3f}", "elements": " + ".join(parts),
                 "table_note": note, "own_fit": "yes" if record["set"] == "JANAF-1998" else "no",
-                "exception": EXCEPTIONS.get((record["formula"], record["class"]), "") if record["set"] != "JANAF-1998" else "",
                 "_record": record, "_h": h, "_s": s, "_parts": parts, "_dg": dg,
             })
     return made
@@ -312,10 +267,10 @@ HEAD = """\
 #   K(g) above 1039.5, Na(g) above 1170.5, P2(g) above 1180.0, Zn(g) above 1180.2, Mg(g) above 1366.1; else (s) or (l), white P.
 #   Form dfG from the preferred records of just these.
 # set, phase, state: the record of ours. own_fit: it is fitted to these very tables and proves nothing but the fit.
-# exception: why a difference beyond 2 kJ and beyond twice our standard uncertainty is left standing.
+# exceptions.csv names every difference beyond 2 kJ and beyond twice our standard uncertainty, with its reason.
 """
 COLUMNS = (
-    "formula class set phase state t_k table dfh298_kj h_minus_h298_kj s_j_per_k dfh_kj dfg_kj dfg_column_kj elements table_note own_fit exception"
+    "formula class set phase state t_k table dfh298_kj h_minus_h298_kj s_j_per_k dfh_kj dfg_kj dfg_column_kj elements table_note own_fit"
 ).split()
 
 
@@ -330,6 +285,9 @@ def text(made):
 
 def rate(made):
     """Prints what lies outside, and the share inside; returns the number of rows outside without a reason."""
+    with EXCEPTIONS.open(encoding="utf-8", newline="") as file:
+        lines = csv.DictReader(line for line in file if not line.startswith("#"))
+        reasons = {(r["formula"], r["class"], r["set"]): r for r in lines}
     records = {(r["formula"], r["class"]): r for r in read_data(DATA) if r["preferred"]}
 
     def element(label, t):
@@ -370,9 +328,11 @@ def rate(made):
             a[1] += 1
             a[2] += strict
         if not inside:
-            key = (row["formula"], row["class"], row["set"], row["table"], record["preferred"], row["exception"])
+            reason = reasons.get((row["formula"], row["class"], row["set"]))
+            listed = reason is not None and f"{t:g}" in reason["t_k"].split()
+            key = (row["formula"], row["class"], row["set"], row["table"], record["preferred"], reason["reason"] if listed else "")
             named.setdefault(key, []).append(f"{t:g} K {off:+.1f} (k=2 {k2:.1f})")
-            bare += not row["exception"]
+            bare += not listed
     for key, list_ in named.items():
         print(*key[:4], "preferred" if key[4] else "", ";", ", ".join(list_), ";", key[5] or "NO REASON")
     for group, by_t in tally.items():
