@@ -34,6 +34,8 @@ export async function open(browser, how = LAPTOP, { ready = true, before = null 
   tab.on('request', (r) => { if (r.url() !== own && !r.url().startsWith('blob:') && !r.url().startsWith('data:')) seen.requests.push(r.url()); });
   tab.on('console', (m) => seen.messages.push(`${m.type()}: ${m.text()}`));
   tab.on('pageerror', (e) => seen.errors.push(String(e)));
+  // Listening all along keeps the choice of files with the test; switching it on and off loses one now and then.
+  tab.on('filechooser', () => {});
   await tab.addInitScript(() => { window.__leewayTest = {}; });
   if (before) await tab.addInitScript(before);
   await tab.goto(own);

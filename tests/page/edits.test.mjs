@@ -284,6 +284,7 @@ test('an empty line is begun and built to its first finding', () => run(LAPTOP, 
 
 test('every demo line opens with its variants, each marked as invented and judged', () => run(LAPTOP, async (tab) => {
   await tab.click('.rail button:has-text("Lines")');
+  await tab.waitForSelector('.panel .choices button');
   const count = await tab.locator('.panel .choices button').count();
   assert.equal(count, 6);
   await tab.keyboard.press('Escape');
