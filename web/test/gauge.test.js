@@ -1,6 +1,6 @@
 import assert from 'node:assert/strict';
 import { test } from 'node:test';
-import { figureOf, firstLever, leversOf, nearest, nice, scaleOf } from '../src/chart/figure.js';
+import { figureOf, firstLever, inUnit, leversOf, nearest, nice, scaleOf, unitOf } from '../src/chart/figure.js';
 import { bigGauge, gauge, place, ticks } from '../src/chart/gauge.js';
 import { STANDINGS } from '../src/chart/mark.js';
 import { curve } from '../src/chart/curve.js';
@@ -93,6 +93,19 @@ test('a row has one scale that is a round number and holds whatever is urgent', 
   assert.ok(span >= 8 + 2 * 4);
   assert.equal(scaleOf([finding({ lever: { turning_points: [], leeway: null } })], 'dew_point', 2), null);
   for (const [x, n] of [[0.9, 1], [1, 1], [1.1, 2], [21, 30], [31, 50], [0.0011, 0.002], [0, 1]]) assert.equal(nice(x), n);
+});
+
+test('a row read partly in per cent and partly in ppm has one scale', () => {
+  const share = (reading, turn, unit) => finding({ lever: { lever: 'H2', unit, reading, turning_points: [turn], leeway: reading - turn, u: Math.abs(turn) / 10, off_side: 'below' } });
+  const list = [share(0.5, 0.3, '%'), share(20, 230, 'ppm')];
+  assert.equal(unitOf(list, 'H2'), '%');
+  const span = scaleOf(list, 'H2', 2);
+  const small = inUnit(figureOf(list[1], 'H2'), '%');
+  assert.ok(Math.abs(small.d - -0.021) < 1e-12 && Math.abs(small.u - 0.0023) < 1e-12);
+  assert.equal(place(small, span, 180, 2).beyond, false, '210 ppm lie inside a scale of tenths of a per cent');
+  assert.equal(inUnit(small, null), small);
+  const other = figureOf(share(12, 10, 'mbar'), 'H2');
+  assert.equal(inUnit({ ...other, unit: 'kJ' }, '%').d, other.d, 'what does not compare keeps its own figures');
 });
 
 test('the lever to begin with is one that turns the findings', () => {

@@ -22,6 +22,26 @@ export function figureOf(finding, lever) {
   return { kind: 'turns', d: found.reading - turn, leeway: found.leeway, u: found.u ?? 0, off: found.off_side === 'below' ? 'below' : 'above', unit: found.unit, reading: found.reading, turn };
 }
 
+/** Sizes of units against each other, for distances on a common scale. @type {Record<string, number>} */
+const SIZES = { '%': 1e-2, ppm: 1e-6, ppb: 1e-9, fraction: 1, bar: 1e5, mbar: 100, kPa: 1e3, Pa: 1, C: 1, K: 1, F: 5 / 9 };
+
+/** The unit of a row: that of its first figure that turns. @param {Finding[]} findings @param {string} lever */
+export function unitOf(findings, lever) {
+  for (const f of findings) {
+    const v = figureOf(f, lever);
+    if (v.kind === 'turns') return v.unit;
+  }
+  return null;
+}
+
+/** A figure's distances in the unit of its row: one zone may be read in ppm and its neighbour in per cent. @template {Figure} F @param {F} figure @param {string | null} unit @returns {F} */
+export function inUnit(figure, unit) {
+  if (figure.kind !== 'turns' || unit === null || figure.unit === unit) return figure;
+  const by = SIZES[figure.unit] / SIZES[unit];
+  // Units that do not compare (a share beside a pressure) keep their own figures.
+  return Number.isFinite(by) ? { ...figure, d: figure.d * by, u: figure.u * by } : figure;
+}
+
 /** The next of 1, 2, 3, 5 times a power of ten. @param {number} x */
 export function nice(x) {
   if (!(x > 0)) return 1;
@@ -36,7 +56,8 @@ export function nice(x) {
  * @param {Finding[]} findings @param {string} lever @param {number} k
  */
 export function scaleOf(findings, lever, k) {
-  const reach = findings.map((f) => ({ f, v: figureOf(f, lever) })).flatMap(({ f, v }) => (v.kind === 'turns' ? [{ urgent: f.standing === 'off side' || f.standing === 'too close to call', r: Math.abs(v.d) + k * v.u }] : []));
+  const unit = unitOf(findings, lever);
+  const reach = findings.map((f) => ({ f, v: inUnit(figureOf(f, lever), unit) })).flatMap(({ f, v }) => (v.kind === 'turns' ? [{ urgent: f.standing === 'off side' || f.standing === 'too close to call', r: Math.abs(v.d) + k * v.u }] : []));
   if (reach.length === 0) return null;
   const all = reach.map((x) => x.r).sort((a, b) => a - b);
   const middle = all[Math.floor((all.length - 1) / 2)];

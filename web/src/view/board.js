@@ -1,5 +1,5 @@
 /** The line as it is built, and below it one row per change with one gauge per zone. */
-import { figureOf, firstLever, leversOf, scaleOf } from '../chart/figure.js';
+import { figureOf, firstLever, inUnit, leversOf, scaleOf, unitOf } from '../chart/figure.js';
 import { ends, gauge } from '../chart/gauge.js';
 import { standing } from '../chart/mark.js';
 import { trace } from '../chart/trace.js';
@@ -284,8 +284,8 @@ function row(state, act, f, col, i, selected) {
   const change = changesOf(lineOnShow(state))[i];
   const findings = a.findings.filter((x) => x.change_index === i);
   const span = scaleOf(findings, lever, a.coverage_factor);
-  const unitOf = findings.map((x) => figureOf(x, lever)).find((v) => v.kind === 'turns');
-  const scale = span && unitOf?.kind === 'turns' ? `±${withUnit(number(span, 3), difference(unitOf.unit))}` : '';
+  const unit = unitOf(findings, lever);
+  const scale = span && unit ? `±${withUnit(number(span, 3), difference(unit))}` : '';
   return h('div', { class: `row${selected ? ' selected' : ''}`, 'data-key': `row-${taken.name}` },
     h('div', { class: 'what' },
       h('button', { type: 'button', class: 'name', onclick: () => act.select(i), 'aria-pressed': String(selected), 'aria-label': `${taken.name}: show where it turns on the line` }, say(change.name)),
@@ -301,6 +301,7 @@ function row(state, act, f, col, i, selected) {
 /** @param {State} state @param {Act} act @param {ReturnType<typeof frame>} f @param {number} col @param {Finding} finding @param {string} lever @param {number | null} span */
 function cell(state, act, f, col, finding, lever, span) {
   const k = state.shown?.coverage_factor ?? 2;
+  const own = unitOf((state.shown?.findings ?? []).filter((x) => x.change_index === finding.change_index), lever);
   const figure = figureOf(finding, lever);
   const before = findingBefore(state, finding);
   const st = standing(finding.standing);
@@ -315,7 +316,7 @@ function cell(state, act, f, col, finding, lever, span) {
     onclick: () => act.openCell(finding.zone_index, finding.change_index),
   },
   h('span', { class: 'say' }, big ? h('b', { class: figure.kind === 'turns' ? '' : 'small' }, big) : null, u ? h('span', null, u) : null, h('i', null, st.short), differs ? h('span', { class: 'at' }, 'not if shifted') : at && (big.length * 10 + (u.length + st.short.length + at.length) * 7.3 + 40 < col) ? h('span', { class: 'at' }, at) : null),
-  why ? h('span', { class: 'why' }, sentence(why)) : gauge(document, { figure, before: before ? figureOf(before, lever) : null, standing: finding.standing, span, width: Math.floor(col) - 15, k }));
+  why ? h('span', { class: 'why' }, sentence(why)) : gauge(document, { figure: inUnit(figure, own), before: before ? inUnit(figureOf(before, lever), own) : null, standing: finding.standing, span, width: Math.floor(col) - 15, k }));
 }
 
 /** @param {State} state @param {Act} act */
@@ -380,8 +381,8 @@ function phone(state, act, f) {
   const shared = sharedOf(state.edit ? state.doc.line : line);
   const findings = ready ? a.findings.filter((x) => x.change_index === i) : [];
   const span = scaleOf(findings, lever, a?.coverage_factor ?? 2);
-  const unitOf = findings.map((x) => figureOf(x, lever)).find((v) => v.kind === 'turns');
-  const scale = span && unitOf?.kind === 'turns' ? `Scale ${withUnit(number(span, 3), difference(unitOf.unit))} each way; bar: k = ${a?.coverage_factor}. ` : '';
+  const unit = unitOf(findings, lever);
+  const scale = span && unit ? `Scale ${withUnit(number(span, 3), difference(unit))} each way; bar: k = ${a?.coverage_factor}. ` : '';
   const step = (/** @type {number} */ by) => act.select((i + by + changes.length) % changes.length);
   return h('main', { class: `board-view phone${state.edit ? ' editing' : ''}`, id: 'main' },
     head(state, act, f), welcome(state, act),

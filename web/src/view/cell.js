@@ -1,5 +1,5 @@
 /** One change in one zone: how far, by which lever, what brings it back, how sure, and the arithmetic. */
-import { figureOf, scaleOf } from '../chart/figure.js';
+import { figureOf, inUnit, scaleOf, unitOf } from '../chart/figure.js';
 import { bigGauge, gauge } from '../chart/gauge.js';
 import { standing } from '../chart/mark.js';
 import { h } from '../dom.js';
@@ -71,8 +71,8 @@ const judged = (f) => (f.judged_why ? `Judged at ${celsius(f.judged_at_K)}, ${sa
 /** @param {State} state @param {Act} act @param {Finding} finding @param {Finding[]} row @param {Finding[]} column @param {string} lever @param {number} k @param {HTMLElement} back */
 function others(state, act, finding, row, column, lever, k, back) {
   const span = scaleOf(row, lever, k);
-  const unitOf = row.map((x) => figureOf(x, lever)).find((v) => v.kind === 'turns');
-  const scale = span && unitOf?.kind === 'turns' ? `; ±${withUnit(number(span, 3), difference(unitOf.unit))}` : '';
+  const unit = unitOf(row, lever);
+  const scale = span && unit ? `; ±${withUnit(number(span, 3), difference(unit))}` : '';
   const label = finding.levers.find((l) => l.lever === lever)?.label ?? 'kJ of dG';
   return h('aside', { class: 'others', 'aria-label': `${finding.change}, every zone`, 'data-key': 'others' },
     h('div', { class: 'top' }, back),
@@ -85,7 +85,7 @@ function others(state, act, finding, row, column, lever, k, back) {
       const st = standing(x.standing);
       return h('button', { type: 'button', class: `one${x === finding ? ' held' : ''}`, 'aria-current': x === finding ? 'true' : null, 'data-key': `o-${x.zone_index}`, onclick: () => act.openCell(x.zone_index, x.change_index) },
         h('span', { class: `say s-${st.tone}` }, h('span', { class: 'tabname' }, `${x.zone_index + 1} ${x.zone}`), h('span', { class: 'q' }, celsius(x.judged_at_K)), h('b', { class: figure.kind === 'turns' ? '' : 'small' }, s.big), st.short),
-        gauge(document, { figure, before: was ? figureOf(was, lever) : null, standing: x.standing, span, width: 276, k }));
+        gauge(document, { figure: inUnit(figure, unit), before: was ? inUnit(figureOf(was, lever), unit) : null, standing: x.standing, span, width: 276, k }));
     }),
     column.length ? h('h2', { class: 'next' }, `In ${finding.zone} `, h('small', null, 'the other changes')) : null,
     column.map((x) => {
