@@ -711,7 +711,6 @@ fn activity_from(taken: &leeway_findings::activity::Taken) -> String {
         From::Given => alloc::format!("your file{source}"),
         From::Coefficient => alloc::format!("mole fraction times your coefficient{source}"),
         From::Raoult => "mole fraction (Raoult's law)".to_string(),
-        From::Pressure => "partial pressure".to_string(),
         From::GivenPressure => alloc::format!("pressure given with the change{source}"),
     }
 }

@@ -27,8 +27,6 @@ pub enum From {
     Coefficient,
     /// Mole fraction alone.
     Raoult,
-    /// Partial pressure of a gas.
-    Pressure,
     /// Partial pressure of a gas given with the change.
     GivenPressure,
 }

@@ -7,8 +7,6 @@ use alloc::vec::Vec;
 use leeway_gas::intake::{GasProblem, Intake};
 use leeway_gas::shift::Shift;
 use leeway_line::model::Zone;
-use leeway_quantity::Spread;
-use leeway_quantity::math::sqrt;
 use leeway_substances::Book;
 
 /// Partial pressures over the zone's species list, bar; NaN where the gas does not show a species.
@@ -169,16 +167,4 @@ impl ZoneGas {
             .collect();
         Ok(Fan { at, read, sum, shifted, branches })
     }
-}
-
-/// How a reading's doubt is spread, for draws.
-#[must_use]
-pub fn spread_of(quantity: &leeway_quantity::Quantity) -> Spread {
-    quantity.tolerance.map_or(Spread::Standard, |(_, s)| s)
-}
-
-/// Half-width of rectangular limits with this standard uncertainty.
-#[must_use]
-pub fn half_width(u: f64) -> f64 {
-    u * sqrt(3.0)
 }
